@@ -20,7 +20,7 @@ const noReact = {
 };
 
 export default defineConfig([
-  globalIgnores(['dist', 'data', 'coverage', 'server/platform/migrations']),
+  globalIgnores(['dist', '.tmp', 'data', 'coverage', 'server/platform/migrations']),
   js.configs.recommended,
   {
     files: ['**/*.{ts,tsx}'],

@@ -34,6 +34,7 @@ export const sheetCss = `
 .sheet tr.step th { background: #f6f5f1; font-size: 10.5pt; border-top: 2px solid #1a2226; break-after: avoid; }
 .sheet tr.step th p { font-size: 9pt; font-weight: 400; margin: 1mm 0 0; }
 .sheet tr.step { break-after: avoid; break-inside: avoid; }
+.sheet tr.hazard { break-inside: avoid; }
 .sheet tr.step .number { color: #28478f; margin-right: 1mm; }
 .sheet .controls { list-style: none; padding: 0; margin: 0; }
 .sheet .controls li { padding: 0.6mm 0; border-bottom: 1px dotted #cdd3d4; break-inside: avoid; }

@@ -52,7 +52,7 @@ export default defineConfig([
   { files: ['shared/**/*.ts'], ignores: ['shared/print/**'], rules: walls([...plainShared, noReact]) },
   { files: ['shared/print/**/*.{ts,tsx}'], rules: walls(plainShared) },
   {
-    files: ['server/**/*.ts', '*.{ts,js}', 'tests/**/*.{ts,tsx}'],
+    files: ['server/**/*.{ts,mjs}', '*.{ts,js}', 'tests/**/*.{ts,tsx}'],
     languageOptions: { globals: globals.node },
   },
   {

@@ -32,7 +32,7 @@ export async function renewSession(
   content: { accountId: string; orgId: string },
 ): Promise<void> {
   await new Promise<void>((resolve, reject) => {
-    request.session.regenerate((error: unknown) => (error ? reject(error as Error) : resolve()));
+    request.session.regenerate((error: unknown) => (error ? reject(error) : resolve()));
   });
   Object.assign(request.session, content);
   await saveSession(request);
@@ -40,12 +40,12 @@ export async function renewSession(
 
 export async function saveSession(request: Request): Promise<void> {
   await new Promise<void>((resolve, reject) => {
-    request.session.save((error: unknown) => (error ? reject(error as Error) : resolve()));
+    request.session.save((error: unknown) => (error ? reject(error) : resolve()));
   });
 }
 
 export async function endSession(request: Request): Promise<void> {
   await new Promise<void>((resolve, reject) => {
-    request.session.destroy((error: unknown) => (error ? reject(error as Error) : resolve()));
+    request.session.destroy((error: unknown) => (error ? reject(error) : resolve()));
   });
 }

@@ -140,7 +140,9 @@ export const accountRoutes: Feature = (router, platform) => {
 
   mount(router, platform, api.readOutbox, async ({ db, request }) => {
     // Mail holds links that sign people in: only somebody at this machine may read it, and nobody where a mail host sends it.
-    const here = ['127.0.0.1', '::1', '::ffff:127.0.0.1'].includes(request.socket.remoteAddress ?? '') && config.trustProxy === 0;
+    const here =
+      ['127.0.0.1', '::1', '::ffff:127.0.0.1'].includes(request.socket.remoteAddress ?? '') &&
+      config.trustProxy === 0;
     if (!config.outbox || !here) throw new Refusal('missing', 'There is no outbox to read here.');
     const rows = await db.select().from(outgoingMails).orderBy(desc(outgoingMails.createdAt)).limit(100);
     return {

@@ -1,0 +1,87 @@
+import { and, asc, eq } from 'drizzle-orm';
+import QRCode from 'qrcode';
+import { shortHash } from '#shared/kernel/canonical.ts';
+import { Refusal } from '#shared/kernel/refusal.ts';
+import { type Frozen, frozenSchema } from '#shared/statements/frozen.ts';
+import type { Sheet, SignatureOnSheet } from '#shared/statements/statements.api.ts';
+import type { UserActor } from '../platform/actor.ts';
+import type { Db } from '../platform/db.ts';
+import type { Platform } from '../platform/platform.ts';
+import { signOns } from '../signons/signons.table.ts';
+import { freeze } from './issue.service.ts';
+import { presentRevision, revisionByNumber, type RevisionRecord } from './read.service.ts';
+import { statements } from './statements.table.ts';
+
+/** What was frozen, read back from its canonical form. */
+export const frozenOf = ({ canonical }: Pick<RevisionRecord, 'canonical'>): Frozen =>
+  frozenSchema.parse(JSON.parse(canonical));
+
+type Printing = Pick<Platform, 'publicUrl' | 'print'>;
+
+export async function sheetOfRevision(
+  db: Db,
+  actor: UserActor,
+  { id, number }: { id: string; number: number },
+  { publicUrl, print }: Printing,
+): Promise<Sheet> {
+  const { revision, statement } = await revisionByNumber(db, actor.orgId, id, number);
+  const verifyAddress = `${publicUrl()}/verify/${shortHash(revision.hash)}`;
+  return {
+    frozen: frozenOf(revision),
+    revision: presentRevision(revision, statement),
+    signatures: await signaturesUnder(db, actor.orgId, revision),
+    verifyAddress,
+    verifyQrSvg: await QRCode.toString(verifyAddress, { type: 'svg', margin: 0, errorCorrectionLevel: 'M' }),
+    printedAt: new Date().toISOString(),
+    pdf: print.available,
+  };
+}
+
+export async function sheetOfDraft(
+  db: Db,
+  actor: UserActor,
+  id: string,
+  { print }: Printing,
+): Promise<Sheet> {
+  const [statement] = await db
+    .select()
+    .from(statements)
+    .where(and(eq(statements.orgId, actor.orgId), eq(statements.id, id)));
+  if (!statement) throw new Refusal('missing', 'This statement is not there.');
+  const frozen = await freeze(db, actor, statement, {
+    revision: (statement.currentRevision ?? 0) + 1,
+    material: true,
+    changeNote: '',
+    issuedAt: new Date(),
+  });
+  return {
+    frozen: { ...frozen, issuedBy: '' },
+    revision: null,
+    signatures: [],
+    verifyAddress: null,
+    verifyQrSvg: null,
+    printedAt: new Date().toISOString(),
+    pdf: print.available,
+  };
+}
+
+/** The signatures under one revision, each person's first. */
+async function signaturesUnder(db: Db, orgId: string, { id }: RevisionRecord): Promise<SignatureOnSheet[]> {
+  const rows = await db
+    .select()
+    .from(signOns)
+    .where(and(eq(signOns.orgId, orgId), eq(signOns.revisionId, id)))
+    .orderBy(asc(signOns.receivedAt));
+  const first = new Map(rows.toReversed().map((row) => [row.personId, row]));
+  return [...first.values()].reverse().map((row) => ({
+    name: row.personName,
+    employer: row.employerName,
+    trade: row.trade,
+    revision: row.revisionNumber,
+    signedAt: row.signedAt.toISOString(),
+    method: row.method,
+    svg: row.svg,
+    typedName: row.typedName,
+    witness: row.witness,
+  }));
+}

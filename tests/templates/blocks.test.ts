@@ -14,7 +14,7 @@ const hazardsOf = (block: Block) =>
 const wordsOf = ({ sources: _sources, ...said }: Block) => stringsIn(said);
 
 test('every file is a block of its name', () => {
-  expect(files.length).toBeGreaterThanOrEqual(14);
+  expect(files.length).toBeGreaterThanOrEqual(45);
   expect(
     files.filter(({ success }) => !success).map(({ file, error }) => `${file}: ${error?.message}`),
   ).toEqual([]);
@@ -41,6 +41,25 @@ test('no passage of more than 25 words stands in two blocks', () => {
         owner.set(passage, block.id);
       }
     }
+});
+
+test('a block that points at another names one that exists', () => {
+  const titles = new Set(blocks.map(({ title }) => title));
+  const named = blocks.flatMap((block) =>
+    wordsOf(block).flatMap((text) => [...text.matchAll(/\bblocks? “(.*?)”/g)].map((match) => match[1] ?? '')),
+  );
+
+  expect(named.length).toBeGreaterThan(0);
+  expect(named.filter((title) => !titles.has(title))).toEqual([]);
+});
+
+/** law.md 1b: what happens to a frame crew usually, sometimes, on additions or on mixed builds. */
+test('every high risk category that a frame crew can meet is named by a block', () => {
+  const named = new Set(blocks.flatMap(({ highRisk }) => highRisk));
+
+  expect(['a', 'c', 'd', 'e', 'g', 'i', 'k', 'm', 'n', 'o'].filter((letter) => !named.has(letter))).toEqual(
+    [],
+  );
 });
 
 test('the right answer does not always stand in the same place', () => {

@@ -5,7 +5,12 @@ import { fileURLToPath } from 'node:url';
 import { inject } from 'vitest';
 import type { NodePgDatabase } from 'drizzle-orm/node-postgres';
 import { type CallOf, type EndpointSpec, isFileReply, type ReplyOf } from '#shared/kernel/endpoint.ts';
+import { signIn } from '#shared/account/account.api.ts';
 import { type Problem, Refusal } from '#shared/kernel/refusal.ts';
+import type { Role } from '#shared/kernel/roles.ts';
+import { demoSignIns } from '../../server/commands/demo-sign-ins.ts';
+import { seedDemo } from '../../server/commands/seed.ts';
+import type { Seeded } from '../../server/commands/seeded.ts';
 import { readConfig } from '../../server/platform/config.ts';
 import { type RunningServer, startServer } from '../../server/platform/server.ts';
 
@@ -103,6 +108,29 @@ export async function startEmptyWorld(): Promise<World> {
     async close() {
       await server.close();
       await rm(dataDir, { recursive: true, force: true });
+    },
+  };
+}
+
+export type DemoWorld = World & {
+  seeded: Seeded;
+  /** Somebody of the demo organisation, signed in. */
+  as: (role: Role) => Promise<Client>;
+};
+
+/** The same with the demo organisation in it. */
+export async function startDemoWorld(): Promise<DemoWorld> {
+  const world = await startEmptyWorld();
+  const seeded = await seedDemo(world.server.platform);
+  return {
+    ...world,
+    seeded,
+    async as(role) {
+      const client = world.client();
+      const signInOf = demoSignIns(root).find((candidate) => candidate.role === role);
+      if (!signInOf) throw new Error(`There is no demo sign-in for ${role}.`);
+      await client.call(signIn, { body: { email: signInOf.email, password: signInOf.password } });
+      return client;
     },
   };
 }

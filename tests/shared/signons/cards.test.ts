@@ -1,7 +1,13 @@
 import { expect, test } from 'vitest';
 import fc from 'fast-check';
 import { controlLevels, controlTier, type ControlLevel } from '#shared/library/block.ts';
-import { type CrewCard, crewCardsOf, fastestReading, readTooFast, wordsOnCards } from '#shared/signons/cards.ts';
+import {
+  type CrewCard,
+  crewCardsOf,
+  fastestReading,
+  readTooFast,
+  wordsOnCards,
+} from '#shared/signons/cards.ts';
 import type { OutlineControl, OutlineStep } from '#shared/statements/document/outline.ts';
 
 const control = (text: string, level: ControlLevel): OutlineControl => ({
@@ -23,7 +29,12 @@ function step(number: number, changes: Partial<OutlineStep> = {}): OutlineStep {
     hazards: [],
     stopIf: [],
     holdPoints: [],
-    needs: { protective: [], competencies: [], equipment: [], permits: [] } as unknown as OutlineStep['needs'],
+    needs: {
+      protective: [],
+      competencies: [],
+      equipment: [],
+      permits: [],
+    } as unknown as OutlineStep['needs'],
     questions: [],
     sources: [],
     caution: '',

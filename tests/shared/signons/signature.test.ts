@@ -20,8 +20,23 @@ const drawn: fc.Arbitrary<DrawnSignature> = fc.record({
 test('a straight stroke has as much ink as it is long, whatever the number of points on it', () => {
   const stroke = (points: [number, number, number][]) => ({ width: 300, height: 150, strokes: [points] });
 
-  expect(inkOf(stroke([[0, 0, 0], [30, 40, 10]]))).toBe(50);
-  expect(inkOf(stroke([[0, 0, 0], [15, 20, 5], [30, 40, 10]]))).toBe(50);
+  expect(
+    inkOf(
+      stroke([
+        [0, 0, 0],
+        [30, 40, 10],
+      ]),
+    ),
+  ).toBe(50);
+  expect(
+    inkOf(
+      stroke([
+        [0, 0, 0],
+        [15, 20, 5],
+        [30, 40, 10],
+      ]),
+    ),
+  ).toBe(50);
 });
 
 test('ink is never negative, and the jump between two strokes is no ink', () => {

@@ -1,0 +1,35 @@
+import { newId } from '#shared/kernel/ids.ts';
+import { forget, recall, remember } from './remembered.ts';
+import { createOutbox } from './outbox.ts';
+import { deviceStore } from './outbox-store.ts';
+import { sendSignature } from './send.ts';
+
+/** The person whom this phone is tied to, shared by all its open pages; in memory too, where storage is refused. */
+let owner: string | null = null;
+
+export function setOwner(personId: string | null): void {
+  owner = personId;
+  if (personId) remember('owner', personId);
+  else forget('owner');
+}
+
+const ownerNow = () => {
+  const remembered = recall('owner');
+  return typeof remembered === 'string' ? remembered : owner;
+};
+
+/** This phone's own id, made once. */
+export function deviceId(): string {
+  const known = recall('device');
+  if (typeof known === 'string') return known;
+  const made = newId();
+  remember('device', made);
+  return made;
+}
+
+/** Signatures made on this phone. One is sent only while the phone is tied to the person who made it. */
+export const deviceOutbox = createOutbox({
+  store: deviceStore('toeboard-phone'),
+  send: sendSignature,
+  maySend: ({ kind, personId }) => kind === 'device' && personId === ownerNow(),
+});

@@ -1,10 +1,10 @@
 import { useEffect, useRef } from 'react';
 import type { Reading } from '#shared/signons/signons.api.ts';
 import { CrewCardView } from './CrewCardView.tsx';
-import { OpeningCard, spokenOpening } from './OpeningCard.tsx';
+import { OpeningCard } from './OpeningCard.tsx';
 import { BigButton, Screen } from './pieces.tsx';
 import { ReadAloud } from './ReadAloud.tsx';
-import { spokenCard } from './spoken.ts';
+import { spokenCard, spokenOpening } from './spoken.ts';
 import { swipeOf, type Touch } from './swipe.ts';
 import { useLargeType } from './useLargeType.ts';
 
@@ -61,7 +61,11 @@ export function CardScreen({
           </>
         }
       >
-        {card ? <CrewCardView key={card.stepId} card={card} /> : <OpeningCard reading={reading} changeNote={changeNote} />}
+        {card ? (
+          <CrewCardView key={card.stepId} card={card} />
+        ) : (
+          <OpeningCard reading={reading} changeNote={changeNote} />
+        )}
       </Screen>
     </div>
   );

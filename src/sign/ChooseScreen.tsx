@@ -38,9 +38,7 @@ export function ChooseScreen({
       }
     >
       {people.length === 0 && (
-        <p className="text-[1.125rem]">
-          Go back to write it another way, or add yourself: it is done once.
-        </p>
+        <p className="text-[1.125rem]">Go back to write it another way, or add yourself: it is done once.</p>
       )}
       <ul className="space-y-3">
         {people.map((person) => (

@@ -42,15 +42,13 @@ export function DoneScreen({
         </div>
         {outgoing.superseded && (
           <p className="mt-3 border-l-8 border-line bg-sheet py-3 pl-3 pr-2">
-            A newer revision was issued while you were reading. Your signature is kept for the one you read. Read
-            and sign the new one before you go on.
+            A newer revision was issued while you were reading. Your signature is kept for the one you read.
+            Read and sign the new one before you go on.
           </p>
         )}
         <Receipt outgoing={outgoing} />
         {outgoing.state === 'refused' && (
-          <p className="mt-3">
-            It stays on this device. Show this to your supervisor.
-          </p>
+          <p className="mt-3">It stays on this device. Show this to your supervisor.</p>
         )}
       </div>
     </Screen>

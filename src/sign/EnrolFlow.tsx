@@ -1,9 +1,9 @@
 import { useState } from 'react';
 import type { z } from 'zod';
+import { newId } from '#shared/kernel/ids.ts';
 import { enrol, type enrolBody } from '#shared/signons/signons.api.ts';
 import { call } from '../lib/call.ts';
 import { ChooseScreen } from './ChooseScreen.tsx';
-import { deviceId } from './device.ts';
 import { FindScreen, type Found } from './FindScreen.tsx';
 import { NewPersonScreen } from './NewPersonScreen.tsx';
 import { NoticeScreen } from './NoticeScreen.tsx';
@@ -23,14 +23,17 @@ export function EnrolFlow({
 }) {
   const [step, setStep] = useState<Step>('notice');
   const [found, setFound] = useState<Found | null>(null);
+  // One id for all tries of this enrolment, so that a resend ties the phone once.
+  const [deviceId] = useState(newId);
   const { busy, trouble, send } = useSending();
   const enrolAs = (dayCode: string, person: z.input<typeof enrolBody>['person']) =>
     send(async () => {
-      const body = { dayCode, deviceId: deviceId(), noticeVersion: notice.version, person };
+      const body = { dayCode, deviceId, noticeVersion: notice.version, person };
       const { personId } = await call(enrol, { params: { token }, body });
       onEnrolled(personId);
     });
-  if (step === 'notice') return <NoticeScreen paragraphs={notice.paragraphs} onAgree={() => setStep('find')} />;
+  if (step === 'notice')
+    return <NoticeScreen paragraphs={notice.paragraphs} onAgree={() => setStep('find')} />;
   if (step === 'find' || !found)
     return (
       <FindScreen

@@ -1,11 +1,11 @@
 import { useState } from 'react';
-import { Refusal } from '#shared/kernel/refusal.ts';
 import { findPerson } from '#shared/signons/signons.api.ts';
 import type { ReplyOf } from '#shared/kernel/endpoint.ts';
 import { call } from '../lib/call.ts';
 import { DayCodeField } from './DayCodeField.tsx';
 import { BigButton, inputClass, Labelled, Screen, Trouble } from './pieces.tsx';
 import { useSending } from './useSending.ts';
+import { fieldTroubles } from './field-troubles.ts';
 import { useWait, waitWords } from './useWait.ts';
 
 export type Found = ReplyOf<typeof findPerson> & { name: string; dayCode: string };
@@ -73,26 +73,13 @@ export function FindScreen({
             onChange={({ target }) => setName(target.value)}
           />
         </Labelled>
-        <DayCodeField value={dayCode} onChange={setDayCode} trouble={asked ? (codeTrouble ?? refused.dayCode) : null} />
+        <DayCodeField
+          value={dayCode}
+          onChange={setDayCode}
+          trouble={asked ? (codeTrouble ?? refused.dayCode) : null}
+        />
         <Trouble words={refused.whole} />
       </Screen>
     </form>
   );
-}
-
-/** Where a refusal belongs: beside its field, or over the whole form. */
-export function fieldTroubles(
-  trouble: Error | null,
-  wait: number,
-): { name: string | null; dayCode: string | null; whole: string | null } {
-  const none = { name: null, dayCode: null, whole: null };
-  if (!trouble) return none;
-  if (!(trouble instanceof Refusal)) return { ...none, whole: trouble.message };
-  if (trouble.code === 'tooMany')
-    return {
-      ...none,
-      whole: wait > 0 ? `Too many tries. Wait ${waitWords(wait)}, then ask your supervisor for today’s code.` : null,
-    };
-  const { name = null, dayCode = null } = trouble.fields;
-  return { name, dayCode, whole: name || dayCode ? null : trouble.message };
 }

@@ -33,14 +33,14 @@ export function ForgetScreen({
     >
       <div className="space-y-3 text-[1.125rem]">
         <p>
-          The phone will no longer know who you are. What {name} has signed stays in the register. Whoever uses the
-          phone next needs the day code.
+          The phone will no longer know who you are. What {name} has signed stays in the register. Whoever
+          uses the phone next needs the day code.
         </p>
         {unsent > 0 && (
           <p className="border-l-8 border-line bg-sheet py-3 pl-3 pr-2">
-            {unsent === 1 ? '1 signature has' : `${unsent} signatures have`} not been sent yet. Nobody else can send
-            it: it waits on this phone until {name} finds themselves here again. Better: keep the phone until it says
-            “Sent”.
+            {unsent === 1 ? '1 signature has' : `${unsent} signatures have`} not been sent yet. Nobody else
+            can send it: it waits on this phone until {name} finds themselves here again. Better: keep the
+            phone until it says “Sent”.
           </p>
         )}
         <Trouble words={trouble} />

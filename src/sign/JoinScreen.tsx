@@ -1,9 +1,9 @@
 import { useState } from 'react';
+import { newId } from '#shared/kernel/ids.ts';
 import { enrol } from '#shared/signons/signons.api.ts';
 import { call } from '../lib/call.ts';
 import { DayCodeField } from './DayCodeField.tsx';
-import { deviceId } from './device.ts';
-import { fieldTroubles } from './FindScreen.tsx';
+import { fieldTroubles } from './field-troubles.ts';
 import { BigButton, Screen, Trouble } from './pieces.tsx';
 import { useSending } from './useSending.ts';
 import { useWait, waitWords } from './useWait.ts';
@@ -24,6 +24,7 @@ export function JoinScreen({
   footer: React.ReactNode;
   onJoined: () => void;
 }) {
+  const [deviceId] = useState(newId);
   const [dayCode, setDayCode] = useState('');
   const [asked, setAsked] = useState(false);
   const { busy, trouble, send } = useSending();
@@ -36,7 +37,7 @@ export function JoinScreen({
     send(async () => {
       await call(enrol, {
         params: { token },
-        body: { dayCode, deviceId: deviceId(), noticeVersion, person: { existing: person.personId } },
+        body: { dayCode, deviceId, noticeVersion, person: { existing: person.personId } },
       });
       onJoined();
     });
@@ -59,7 +60,11 @@ export function JoinScreen({
         }
       >
         <p className="mb-4 text-[1.125rem]">This phone is known, but you are not on this site’s crew yet.</p>
-        <DayCodeField value={dayCode} onChange={setDayCode} trouble={asked ? (codeTrouble ?? refused.dayCode) : null} />
+        <DayCodeField
+          value={dayCode}
+          onChange={setDayCode}
+          trouble={asked ? (codeTrouble ?? refused.dayCode) : null}
+        />
         <Trouble words={refused.whole} />
         {footer}
       </Screen>

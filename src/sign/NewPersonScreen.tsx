@@ -137,5 +137,7 @@ function troublesOf(person: NewPerson, refusal: Error | null): Record<string, st
   // The server names the field within the whole request: `person.new.trade`.
   const fields = refusal instanceof Refusal ? Object.entries(refusal.fields) : [];
   const own = fields.map(([path, words]) => [path.split('.').at(-1) ?? '', words] as const);
-  return own.length > 0 ? { ...Object.fromEntries(own), whole: own[0]?.[1] ?? '' } : { whole: refusal.message };
+  return own.length > 0
+    ? { ...Object.fromEntries(own), whole: own[0]?.[1] ?? '' }
+    : { whole: refusal.message };
 }

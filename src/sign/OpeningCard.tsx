@@ -33,14 +33,3 @@ export function OpeningCard({ reading, changeNote }: { reading: Reading; changeN
     </>
   );
 }
-
-/** The opening card as it is read aloud. */
-export function spokenOpening(reading: Reading, changeNote: string | null): string[] {
-  return [
-    `${reading.title}. Revision ${reading.number}.`,
-    ...(changeNote ? [`What is different: ${changeNote}`] : []),
-    ...(reading.job ? [`The job: ${reading.job}`] : []),
-    ...(reading.responsible ? [`Who to ask: ${reading.responsible}`] : []),
-    ...(reading.emergency ? [`In an emergency: ${reading.emergency}`] : []),
-  ];
-}

@@ -2,7 +2,7 @@ import { formatTime } from '#shared/kernel/work-date.ts';
 import type { Outgoing } from './outbox.ts';
 
 /** Where a signature is, in words: sent and when, on this device, or refused and why. */
-export function outgoingWords({ state, receivedAt, timeZone, trouble }: Outgoing, durable: boolean): string {
+function outgoingWords({ state, receivedAt, timeZone, trouble }: Outgoing, durable: boolean): string {
   if (state === 'sent') return `Sent ${receivedAt ? formatTime(receivedAt, timeZone) : ''}`.trim();
   if (state === 'refused') return `Not accepted: ${trouble ?? 'the server refused it.'}`;
   if (!durable)

@@ -134,7 +134,9 @@ function StatementTask({
   const [readOnly] = useState(!task.isOpen);
   const { value: reading, trouble, reload } = useLoad(task.key, () => fetchReading(task.key));
   if (!reading)
-    return <LoadScreen trouble={trouble} waiting="Fetching the statement…" onAgain={reload} onBack={onLeave} />;
+    return (
+      <LoadScreen trouble={trouble} waiting="Fetching the statement…" onAgain={reload} onBack={onLeave} />
+    );
   return (
     <ReadingFlow
       reading={reading}

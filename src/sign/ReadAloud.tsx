@@ -9,7 +9,8 @@ export function ReadAloud({ lines, language }: { lines: string[]; language: stri
   const [speaking, setSpeaking] = useState(false);
   const [trouble, setTrouble] = useState<string | null>(null);
   useEffect(() => () => stop.current?.(), []);
-  if (voice === 'none') return <p className="text-sm text-ink-soft">This device has no voice to read aloud with.</p>;
+  if (voice === 'none')
+    return <p className="text-sm text-ink-soft">This device has no voice to read aloud with.</p>;
   const toggle = () => {
     if (voice === 'looking') return;
     if (speaking) {

@@ -2,13 +2,21 @@ import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { Signature } from '#shared/signons/signature.ts';
 import type { Reading } from '#shared/signons/signons.api.ts';
 import { CardScreen } from './CardScreen.tsx';
-import { type Flow, isAnswered, maySign, type Move, moveOn, resumeFlow, type Script, scriptOf } from './flow.ts';
+import {
+  type Flow,
+  isAnswered,
+  maySign,
+  type Move,
+  moveOn,
+  resumeFlow,
+  type Script,
+  scriptOf,
+} from './flow.ts';
 import { QuestionScreen } from './QuestionScreen.tsx';
 import type { SignedReading } from './outgoing.ts';
 import { forget, forgetAll, recall, remember } from './remembered.ts';
 import { SignScreen } from './SignScreen.tsx';
 import { useReadingTime } from './useReadingTime.ts';
-
 
 /** Cards, check questions, signature. `readOnly` shows the cards alone, for somebody who has signed. */
 export function ReadingFlow({

@@ -1,11 +1,6 @@
 import { useMemo, useState } from 'react';
 import type { ReplyOf } from '#shared/kernel/endpoint.ts';
-import {
-  forgetDevice,
-  getOwnReading,
-  getOwnToSign,
-  getSignPage,
-} from '#shared/signons/signons.api.ts';
+import { forgetDevice, getOwnReading, getOwnToSign, getSignPage } from '#shared/signons/signons.api.ts';
 import { call } from '../lib/call.ts';
 import { deviceOutbox, setOwner } from './device.ts';
 import { EnrolFlow } from './EnrolFlow.tsx';

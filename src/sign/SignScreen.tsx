@@ -2,8 +2,8 @@ import { useRef, useState } from 'react';
 import type { Signature } from '#shared/signons/signature.ts';
 import type { Declaration } from '#shared/signons/signons.api.ts';
 import { BigButton, inputClass, Labelled, Screen } from './pieces.tsx';
-import { type Ink, noInk, SignatureField } from './SignatureField.tsx';
-import { drawnSignatureOf, inkRefusal } from './strokes.ts';
+import { SignatureField } from './SignatureField.tsx';
+import { drawnSignatureOf, type Ink, inkRefusal, noInk } from './strokes.ts';
 
 type Typed = { name: string; witness: string };
 
@@ -57,7 +57,10 @@ export function SignScreen({
       }
     >
       {children}
-      <div lang={declaration.language} className="border-l-4 border-zinc bg-sheet py-3 pl-3 pr-2 text-[1.125rem]">
+      <div
+        lang={declaration.language}
+        className="border-l-4 border-zinc bg-sheet py-3 pl-3 pr-2 text-[1.125rem]"
+      >
         {declaration.words.map((line) => (
           <p key={line} className="mb-2 last:mb-0">
             {line}
@@ -100,7 +103,8 @@ const nameTrouble = (name: string) => (name.trim().length < 2 ? 'Type your name.
 
 function witnessTrouble({ name, witness }: Typed): string | null {
   if (witness.trim().length < 2) return 'The witness writes their name.';
-  if (witness.trim().toLowerCase() === name.trim().toLowerCase()) return 'The witness is somebody else than the signer.';
+  if (witness.trim().toLowerCase() === name.trim().toLowerCase())
+    return 'The witness is somebody else than the signer.';
   return null;
 }
 
@@ -115,7 +119,11 @@ function TypedFields({
 }) {
   return (
     <>
-      <Labelled id="typed-name" label="Your name, typed as your signature" trouble={asked ? nameTrouble(typed.name) : null}>
+      <Labelled
+        id="typed-name"
+        label="Your name, typed as your signature"
+        trouble={asked ? nameTrouble(typed.name) : null}
+      >
         <input
           id="typed-name"
           className={inputClass}

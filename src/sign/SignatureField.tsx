@@ -1,11 +1,7 @@
 import { useEffect, useRef, useState } from 'react';
 import SignaturePad, { type PointGroup } from 'signature_pad';
 import { BigButton, Trouble } from './pieces.tsx';
-import { fitInto, type Size, type Stroke, toCanvas, toFrame } from './strokes.ts';
-
-/** What has been drawn so far: strokes in the frame of the box as it was at the first touch. */
-export type Ink = { frame: Size | null; strokes: Stroke[] };
-export const noInk: Ink = { frame: null, strokes: [] };
+import { fitInto, type Ink, noInk, type Size, type Stroke, toCanvas, toFrame } from './strokes.ts';
 
 const pen: Omit<PointGroup, 'points'> = {
   penColor: '#1A2226',
@@ -39,7 +35,10 @@ export function SignatureField({
           aria-describedby="signature-trouble"
           className="block h-[clamp(130px,38dvh,240px)] w-full touch-none rounded-[3px] border-2 border-edge bg-white"
         />
-        <span aria-hidden className="pointer-events-none absolute inset-x-4 bottom-8 border-b border-[#7C878C]" />
+        <span
+          aria-hidden
+          className="pointer-events-none absolute inset-x-4 bottom-8 border-b border-[#7C878C]"
+        />
         {count === 0 && (
           <span aria-hidden className="pointer-events-none absolute bottom-9 left-4 text-[#556067]">
             Sign here with a finger
@@ -101,15 +100,20 @@ function usePad(
   useEffect(() => {
     const box = canvas.current;
     if (!box || !size || !pad.current) return;
-    const ratio = Math.max(1, window.devicePixelRatio);
-    const isSized = box.width === Math.round(size.width * ratio) && box.height === Math.round(size.height * ratio);
-    if (isSized && pad.current.toData().length === ink.strokes.length) return;
-    box.width = Math.round(size.width * ratio);
-    box.height = Math.round(size.height * ratio);
-    box.getContext('2d')?.scale(ratio, ratio);
+    if (!fitCanvas(box, size) && pad.current.toData().length === ink.strokes.length) return;
     const fit = fitInto(ink.frame ?? size, size);
     pad.current.fromData(ink.strokes.map((stroke) => groupOf(stroke.map((point) => toCanvas(fit, point)))));
   }, [canvas, ink, size]);
+}
+
+/** Gives the canvas as many dots as the screen has under it; false where it has them already. Setting the size wipes it. */
+function fitCanvas(box: HTMLCanvasElement, { width, height }: Size): boolean {
+  const ratio = Math.max(1, window.devicePixelRatio);
+  if (box.width === Math.round(width * ratio) && box.height === Math.round(height * ratio)) return false;
+  box.width = Math.round(width * ratio);
+  box.height = Math.round(height * ratio);
+  box.getContext('2d')?.scale(ratio, ratio);
+  return true;
 }
 
 const groupOf = (stroke: Stroke): PointGroup => ({

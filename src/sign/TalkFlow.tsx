@@ -1,4 +1,5 @@
 import { formatDay } from '#shared/kernel/work-date.ts';
+import { fillWords } from '#shared/library/declaration.ts';
 import type { Signature } from '#shared/signons/signature.ts';
 import type { ToSign } from '#shared/signons/signons.api.ts';
 import { SignScreen } from './SignScreen.tsx';
@@ -17,17 +18,20 @@ export function TalkFlow({
   onSigned: (signature: Signature) => Promise<void>;
   onLeave: () => void;
 }) {
+  const { talkDeclaration } = toSign;
+  const date = formatDay(talk.date);
+  const words = fillWords(talkDeclaration.words, { topic: talk.topic, date });
   return (
     <SignScreen
       title={`Toolbox talk: ${talk.topic}`}
       signer={toSign.person.name}
-      declaration={toSign.talkDeclaration}
+      declaration={{ ...talkDeclaration, words }}
       {...(witness ? { witness } : {})}
       onSign={onSigned}
       onBack={onLeave}
     >
       <p className="mb-3 text-ink-soft">
-        {formatDay(talk.date)}, {talk.time}, {talk.place}. Presented by {talk.presenter}.
+        {date}, {talk.time}, {talk.place}. Presented by {talk.presenter}.
       </p>
       {talk.points.length > 0 && (
         <ul className="mb-4 list-disc space-y-2 pl-6 text-[1.125rem]">

@@ -29,7 +29,8 @@ export function ToSignScreen({
       </p>
       {tasks.length === 0 && (
         <p className="mt-4 text-[1.125rem]">
-          No statement is in force for this site and no talk is open today. Ask your supervisor before you start.
+          No statement is in force for this site and no talk is open today. Ask your supervisor before you
+          start.
         </p>
       )}
       <ul className="mt-4 space-y-4">
@@ -110,7 +111,9 @@ function FinishedTask({ task, toSign, outbox, onOpen }: TaskProps & { outbox: Ou
         <OutgoingStatus outgoing={task.outgoing} durable={outbox.isDurable()} />
       ) : (
         <p className="text-lichen">
-          {signedAt ? `You signed this ${formatInstant(signedAt, toSign.site.timeZone)}.` : 'You signed this.'}
+          {signedAt
+            ? `You signed this ${formatInstant(signedAt, toSign.site.timeZone)}.`
+            : 'You signed this.'}
         </p>
       )}
       {task.kind === 'statement' && (

@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import type { Outbox, Outgoing } from './outbox.ts';
 import { BigButton } from './pieces.tsx';
 import { useOutgoing } from './useOutgoing.ts';
@@ -8,12 +9,15 @@ export function UnsentNotice({ outbox }: { outbox: Outbox }) {
   const waiting = outgoing.filter(({ state }) => state === 'waiting');
   const refused = outgoing.filter(({ state }) => state === 'refused');
   return (
-    <div role="status" className={waiting.length + refused.length > 0 ? 'mx-auto mt-4 w-full max-w-[40rem] px-4' : ''}>
+    <div
+      role="status"
+      className={waiting.length + refused.length > 0 ? 'mx-auto mt-4 w-full max-w-[40rem] px-4' : ''}
+    >
       {waiting.length > 0 && (
         <div className="border-l-8 border-line bg-sheet py-3 pl-3 pr-2">
           <p className="font-semibold">
-            {waiting.length === 1 ? '1 signature is' : `${waiting.length} signatures are`} kept on this phone and
-            will be sent.
+            {waiting.length === 1 ? '1 signature is' : `${waiting.length} signatures are`} kept on this phone
+            and will be sent.
           </p>
           <ul className="list-disc pl-6">
             {waiting.map(({ id, person, title }) => (
@@ -35,6 +39,7 @@ export function UnsentNotice({ outbox }: { outbox: Outbox }) {
 }
 
 function Refused({ kept, outbox }: { kept: Outgoing; outbox: Outbox }) {
+  const [sure, setSure] = useState(false);
   return (
     <div className="mt-2 border-l-8 border-oxide bg-sheet py-3 pl-3 pr-2">
       <p className="font-semibold text-oxide">The signature of {kept.person} was not accepted.</p>
@@ -45,8 +50,8 @@ function Refused({ kept, outbox }: { kept: Outgoing; outbox: Outbox }) {
         <BigButton kind="quiet" onClick={() => void outbox.tryAgain(kept.id)}>
           Try again
         </BigButton>
-        <BigButton kind="stop" onClick={() => void outbox.forget(kept.id)}>
-          Remove it
+        <BigButton kind="stop" onClick={() => (sure ? void outbox.forget(kept.id) : setSure(true))}>
+          {sure ? 'Remove it for good: it is nowhere else' : 'Remove it'}
         </BigButton>
       </div>
     </div>

@@ -1,4 +1,3 @@
-import { newId } from '#shared/kernel/ids.ts';
 import { forget, recall, remember } from './remembered.ts';
 import { createOutbox } from './outbox.ts';
 import { deviceStore } from './outbox-store.ts';
@@ -17,15 +16,6 @@ const ownerNow = () => {
   const remembered = recall('owner');
   return typeof remembered === 'string' ? remembered : owner;
 };
-
-/** This phone's own id, made once. */
-export function deviceId(): string {
-  const known = recall('device');
-  if (typeof known === 'string') return known;
-  const made = newId();
-  remember('device', made);
-  return made;
-}
 
 /** Signatures made on this phone. One is sent only while the phone is tied to the person who made it. */
 export const deviceOutbox = createOutbox({

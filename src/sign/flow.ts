@@ -76,8 +76,7 @@ function next(script: Script, flow: Flow): Flow {
     if (!isAnswered(script, flow, place.index)) return flow;
     return { ...flow, place: questionOrSign(script, place.index + 1) };
   }
-  if (rereading !== null)
-    return { ...flow, rereading: null, place: { at: 'question', index: rereading } };
+  if (rereading !== null) return { ...flow, rereading: null, place: { at: 'question', index: rereading } };
   if (place.index + 1 >= script.cards) return { ...flow, place: questionOrSign(script, 0) };
   const index = place.index + 1;
   return { ...flow, place: { at: 'card', index }, seen: Math.max(flow.seen, index + 1) };

@@ -13,9 +13,9 @@ export function memoryStore(): OutboxStore {
   const kept = new Map<string, Outgoing>();
   return {
     durable: false,
-    all: async () => [...kept.values()],
-    put: async (outgoing) => void kept.set(outgoing.id, outgoing),
-    remove: async (id) => void kept.delete(id),
+    all: () => Promise.resolve([...kept.values()]),
+    put: (outgoing) => Promise.resolve(void kept.set(outgoing.id, outgoing)),
+    remove: (id) => Promise.resolve(void kept.delete(id)),
   };
 }
 

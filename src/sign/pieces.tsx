@@ -63,7 +63,11 @@ export function Screen({
 /** Says what is wrong, beside what it is about; empty while nothing is. */
 export function Trouble({ id, words }: { id?: string; words: string | null }) {
   return (
-    <p id={id} role="alert" className={words ? 'mt-2 border-l-4 border-line pl-3 font-semibold text-line' : ''}>
+    <p
+      id={id}
+      role="alert"
+      className={words ? 'mt-2 border-l-4 border-line pl-3 font-semibold text-line' : ''}
+    >
       {words}
     </p>
   );

@@ -4,6 +4,9 @@ import { type DrawnSignature, inkOf, leastInk } from '#shared/signons/signature.
 export type InkPoint = { x: number; y: number; time: number };
 export type Stroke = InkPoint[];
 export type Size = { width: number; height: number };
+/** What has been drawn so far: strokes in the frame of the box as it was at the first touch. */
+export type Ink = { frame: Size | null; strokes: Stroke[] };
+export const noInk: Ink = { frame: null, strokes: [] };
 /** Uniform scale and shift from the frame to the canvas as it stands now. */
 export type Fit = { scale: number; dx: number; dy: number };
 

@@ -18,7 +18,9 @@ export function useSending(): Sending {
       setBusy(true);
       setTrouble(null);
       work()
-        .catch((error: unknown) => setTrouble(error instanceof Error ? error : new Error('Something went wrong.')))
+        .catch((error: unknown) =>
+          setTrouble(error instanceof Error ? error : new Error('Something went wrong.')),
+        )
         .finally(() => setBusy(false));
     },
   };

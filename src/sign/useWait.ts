@@ -16,7 +16,7 @@ export function useWait(trouble: unknown): number {
     return () => clearInterval(timer);
   }, [trouble, seconds]);
   if (seconds === 0) return 0;
-  if (until?.trouble !== trouble) return seconds;
+  if (!until || until.trouble !== trouble) return seconds;
   return Math.max(0, Math.ceil((until.at - now) / 1000));
 }
 

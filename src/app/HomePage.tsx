@@ -1,0 +1,8 @@
+import { Navigate } from 'react-router-dom';
+import { useSession } from './session.queries.ts';
+import { firstPathOf } from './Shell.tsx';
+
+/** The role decides the first screen. */
+export function HomePage() {
+  return <Navigate to={firstPathOf(useSession().role)} replace />;
+}

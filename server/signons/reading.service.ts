@@ -1,5 +1,6 @@
 import { and, desc, eq } from 'drizzle-orm';
 import { crewCardsOf } from '#shared/signons/cards.ts';
+import { checkQuestionsOf } from '#shared/signons/questions.ts';
 import type { Reading, ToSign } from '#shared/signons/signons.api.ts';
 import { getPerson } from '../people/people.service.ts';
 import type { Db } from '../platform/db.ts';
@@ -94,9 +95,7 @@ export async function readingOf(db: Db, orgId: string, revisionId: string): Prom
       .join('\n'),
     responsible: particulars.responsible,
     cards: crewCardsOf(frozen),
-    questions: steps.flatMap((step) =>
-      step.questions.map((question, index) => ({ ...question, id: `${step.id}.${index}`, stepId: step.id })),
-    ),
+    questions: checkQuestionsOf(steps, frozen.matrix),
     declaration: statementDeclaration(frozen.profile.id, {
       title: frozen.title,
       revision: String(revision.number),

@@ -8,7 +8,8 @@ import { call } from '../lib/call.ts';
 import { paths } from './paths.ts';
 import { sessionQuery, useSession } from './session.queries.ts';
 
-const item = 'flex min-h-10 cursor-pointer items-center gap-2 rounded px-3 outline-none data-[highlighted]:bg-chalk-wash';
+const item =
+  'flex min-h-10 cursor-pointer items-center gap-2 rounded px-3 outline-none data-[highlighted]:bg-chalk-wash';
 
 export function AccountMenu() {
   const session = useSession();
@@ -29,12 +30,19 @@ export function AccountMenu() {
 
   return (
     <DropdownMenu.Root>
-      <DropdownMenu.Trigger className="flex min-h-10 items-center gap-2 rounded border border-edge px-2.5 text-ink" aria-label={`Account of ${session.account.name}`}>
+      <DropdownMenu.Trigger
+        className="flex min-h-10 items-center gap-2 rounded border border-edge px-2.5 text-ink"
+        aria-label={`Account of ${session.account.name}`}
+      >
         <UserRound size={18} strokeWidth={1.75} aria-hidden />
         <span className="hidden lg:inline">{session.account.name}</span>
       </DropdownMenu.Trigger>
       <DropdownMenu.Portal>
-        <DropdownMenu.Content align="end" sideOffset={4} className="z-50 min-w-56 rounded border border-zinc bg-sheet p-1 text-ink shadow-float">
+        <DropdownMenu.Content
+          align="end"
+          sideOffset={4}
+          className="z-50 min-w-56 rounded border border-zinc bg-sheet p-1 text-ink shadow-float"
+        >
           <DropdownMenu.Label className="px-3 py-2 text-sm text-ink-soft">
             {session.account.name}, {roleNames[session.role].toLowerCase()}
           </DropdownMenu.Label>

@@ -15,7 +15,10 @@ export function Board() {
   const worst = data.parts.find(({ well }) => !well) ?? data.parts[0];
   return (
     <aside aria-label="Board" className="border-t-[3px] border-zinc bg-sheet pt-[3px]">
-      <div className="flex min-h-11 items-center gap-x-2 overflow-x-auto border-t border-zinc px-4 whitespace-nowrap sm:px-6" aria-live="polite">
+      <div
+        className="flex min-h-11 items-center gap-x-2 overflow-x-auto border-t border-zinc px-4 whitespace-nowrap sm:px-6"
+        aria-live="polite"
+      >
         <span className="shrink-0 font-medium">{data.site}</span>
         <span className="hidden gap-2 sm:flex">
           {data.parts.map((part) => (

@@ -41,7 +41,11 @@ function useCommands(): Command[] {
     ...placesOf(role).map(({ name, to }) => ({ name, kind: 'Page', to })),
     ...(mayDo('statement.write') ? [{ name: 'New statement', kind: 'Do', to: paths.newStatement }] : []),
     ...(mayDo('talk.write') ? [{ name: 'New talk', kind: 'Do', to: paths.newTalk }] : []),
-    ...(statements.data?.statements ?? []).map(({ id, title }) => ({ name: title, kind: 'Statement', to: paths.statement(id) })),
+    ...(statements.data?.statements ?? []).map(({ id, title }) => ({
+      name: title,
+      kind: 'Statement',
+      to: paths.statement(id),
+    })),
     ...(people.data?.people ?? []).map(({ id, name }) => ({ name, kind: 'Person', to: paths.person(id) })),
     ...sites.map(({ id, name }) => ({ name, kind: 'Site', to: paths.site(id) })),
   ];
@@ -55,7 +59,9 @@ function Commands({ onDone }: { onDone: () => void }) {
   const [search, setSearch] = useState('');
   const [at, setAt] = useState(0);
   const words = search.toLowerCase().split(/\s+/);
-  const found = commands.filter(({ name, kind }) => words.every((word) => `${name} ${kind}`.toLowerCase().includes(word))).slice(0, most);
+  const found = commands
+    .filter(({ name, kind }) => words.every((word) => `${name} ${kind}`.toLowerCase().includes(word)))
+    .slice(0, most);
   const go = (command: Command | undefined) => {
     if (!command) return;
     onDone();

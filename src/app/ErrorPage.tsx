@@ -11,7 +11,11 @@ export function ErrorPage() {
     <main className="mx-auto max-w-xl px-4 py-16">
       <Mark size={32} />
       <h1 className="mt-4 text-2xl">{missing ? 'There is nothing here' : 'Something went wrong'}</h1>
-      <p className="mt-2">{missing ? 'This address leads to no page. It may have been mistyped, or what it showed is gone.' : wordsOf(error)}</p>
+      <p className="mt-2">
+        {missing
+          ? 'This address leads to no page. It may have been mistyped, or what it showed is gone.'
+          : wordsOf(error)}
+      </p>
       <p className="mt-4">
         <a href={paths.home}>Go to the first page</a>
       </p>

@@ -1,5 +1,17 @@
 import { useQuery } from '@tanstack/react-query';
-import { AlertTriangle, Clock, FileText, ListChecks, MapPin, Megaphone, Menu, PenLine, Sun, UserRound, Users } from 'lucide-react';
+import {
+  AlertTriangle,
+  Clock,
+  FileText,
+  ListChecks,
+  MapPin,
+  Megaphone,
+  Menu,
+  PenLine,
+  Sun,
+  UserRound,
+  Users,
+} from 'lucide-react';
 import type { LucideIcon } from 'lucide-react';
 import { useState } from 'react';
 import { Link, Navigate, NavLink, Outlet, useLocation } from 'react-router-dom';
@@ -43,16 +55,24 @@ export const firstPathOf = (role: Role): string => firstPlaces[role].to;
 export function Shell() {
   const session = useQuery(sessionQuery);
   const { pathname, search } = useLocation();
-  if (session.data === null) return <Navigate to={`${paths.signIn}?to=${encodeURIComponent(pathname + search)}`} replace />;
+  if (session.data === null)
+    return <Navigate to={`${paths.signIn}?to=${encodeURIComponent(pathname + search)}`} replace />;
   return (
     <Loaded query={session}>
       {(data) =>
         data ? (
           <div className="flex min-h-dvh flex-col">
-            <a href="#content" className="sr-only focus:not-sr-only focus:absolute focus:z-50 focus:bg-sheet focus:p-2">
+            <a
+              href="#content"
+              className="sr-only focus:not-sr-only focus:absolute focus:z-50 focus:bg-sheet focus:p-2"
+            >
               Skip to the page
             </a>
-            <Header role={data.role} invented={data.organisation.invented} organisation={data.organisation.name} />
+            <Header
+              role={data.role}
+              invented={data.organisation.invented}
+              organisation={data.organisation.name}
+            />
             <main id="content" tabIndex={-1} className="grow pb-4 outline-none">
               <Outlet />
             </main>
@@ -97,7 +117,9 @@ function Header({ role, organisation, invented }: { role: Role; organisation: st
         </div>
       </div>
       {invented ? (
-        <p className="border-t border-zinc px-4 py-0.5 text-sm text-ink-soft sm:px-6">{organisation}: invented demo data, every name and number in it</p>
+        <p className="border-t border-zinc px-4 py-0.5 text-sm text-ink-soft sm:px-6">
+          {organisation}: invented demo data, every name and number in it
+        </p>
       ) : null}
     </header>
   );
@@ -114,7 +136,12 @@ function TabBar({ role }: { role: Role }) {
       {more ? (
         <div className="flex flex-wrap gap-1 border-b border-zinc p-2">
           {rest.map((place) => (
-            <NavLink key={place.to} to={place.to} onClick={() => setMore(false)} className="flex min-h-12 items-center gap-2 rounded px-3 text-ink no-underline">
+            <NavLink
+              key={place.to}
+              to={place.to}
+              onClick={() => setMore(false)}
+              className="flex min-h-12 items-center gap-2 rounded px-3 text-ink no-underline"
+            >
               <place.icon size={18} strokeWidth={1.75} aria-hidden />
               {place.name}
             </NavLink>
@@ -126,7 +153,9 @@ function TabBar({ role }: { role: Role }) {
           <NavLink
             key={place.to}
             to={place.to}
-            className={({ isActive }) => `flex min-h-14 grow basis-0 flex-col items-center justify-center text-xs no-underline ${isActive ? 'text-chalk' : 'text-ink-soft'}`}
+            className={({ isActive }) =>
+              `flex min-h-14 grow basis-0 flex-col items-center justify-center text-xs no-underline ${isActive ? 'text-chalk' : 'text-ink-soft'}`
+            }
           >
             <place.icon size={20} strokeWidth={1.75} aria-hidden />
             {place.name}
@@ -147,4 +176,3 @@ function TabBar({ role }: { role: Role }) {
     </nav>
   );
 }
-

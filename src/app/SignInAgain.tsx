@@ -30,7 +30,9 @@ export function SignInAgain() {
     setBusy(true);
     setTrouble('');
     try {
-      const session = await call(signIn, { body: { email: account.email, password, orgId: organisation.id } });
+      const session = await call(signIn, {
+        body: { email: account.email, password, orgId: organisation.id },
+      });
       client.setQueryData(sessionQuery.queryKey, session);
       setPassword('');
       for (const resolve of waiting) resolve();

@@ -48,7 +48,11 @@ export const router = createBrowserRouter([
       page('outbox', 'OutboxPage', () => import('../account/OutboxPage.tsx')),
       page('verify/:hash', 'VerifyPage', () => import('../statements/VerifyPage.tsx')),
       page('statements/:id/print', 'PrintPage', () => import('../statements/PrintPage.tsx')),
-      page('statements/:id/revisions/:number/print', 'PrintPage', () => import('../statements/PrintPage.tsx')),
+      page(
+        'statements/:id/revisions/:number/print',
+        'PrintPage',
+        () => import('../statements/PrintPage.tsx'),
+      ),
       page('sites/:id/board-sheet', 'BoardSheetPage', () => import('../sites/BoardSheetPage.tsx')),
       { path: '/', Component: Shell, children: signedIn },
     ],

@@ -8,15 +8,24 @@ export type PersonFilters = z.input<typeof api.personFilters>;
 export const peopleQuery = (filters: PersonFilters) =>
   queryOptions({ queryKey: ['people', filters], queryFn: () => call(api.listPeople, { query: filters }) });
 
-export const personQuery = (id: string) => queryOptions({ queryKey: ['people', id], queryFn: () => call(api.getPerson, { params: { id } }) });
+export const personQuery = (id: string) =>
+  queryOptions({ queryKey: ['people', id], queryFn: () => call(api.getPerson, { params: { id } }) });
 
-export const employersQuery = queryOptions({ queryKey: ['employers'], queryFn: () => call(api.listEmployers, {}) });
+export const employersQuery = queryOptions({
+  queryKey: ['employers'],
+  queryFn: () => call(api.listEmployers, {}),
+});
 
 function usePeopleChange<Input, Reply>(send: (input: Input) => Promise<Reply>) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: send,
-    onSuccess: () => Promise.all(['people', 'employers', 'sites', 'board'].map((queryKey) => client.invalidateQueries({ queryKey: [queryKey] }))),
+    onSuccess: () =>
+      Promise.all(
+        ['people', 'employers', 'sites', 'board'].map((queryKey) =>
+          client.invalidateQueries({ queryKey: [queryKey] }),
+        ),
+      ),
   });
 }
 
@@ -27,4 +36,6 @@ export const useArchivePerson = (id: string) =>
   usePeopleChange((archived: boolean) => call(api.archivePerson, { params: { id }, body: { archived } }));
 
 export const useSaveEmployer = () =>
-  usePeopleChange(({ id, ...body }: z.output<typeof api.employerBody> & { id: string }) => call(api.saveEmployer, { params: { id }, body }));
+  usePeopleChange(({ id, ...body }: z.output<typeof api.employerBody> & { id: string }) =>
+    call(api.saveEmployer, { params: { id }, body }),
+  );

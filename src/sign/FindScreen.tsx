@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 import { findPerson } from '#shared/signons/signons.api.ts';
 import type { ReplyOf } from '#shared/kernel/endpoint.ts';
 import { call } from '../lib/call.ts';
@@ -29,8 +29,12 @@ export function FindScreen({
   const nameTrouble = name.trim().length < 3 ? 'Write at least three letters of your name.' : null;
   const codeTrouble = /^\d{4}$/.test(dayCode) ? null : 'The day code is four digits.';
   const refused = fieldTroubles(trouble, wait);
+  useEffect(() => {
+    if (trouble) document.getElementById('day-code')?.focus();
+  }, [trouble]);
   const find = () => {
     setAsked(true);
+    if (nameTrouble || codeTrouble) document.getElementById(nameTrouble ? 'name' : 'day-code')?.focus();
     if (nameTrouble || codeTrouble || wait > 0) return;
     send(async () => {
       const found = await call(findPerson, { params: { token }, body: { dayCode, name: name.trim() } });

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 import { newId } from '#shared/kernel/ids.ts';
 import { enrol } from '#shared/signons/signons.api.ts';
 import { call } from '../lib/call.ts';
@@ -31,8 +31,12 @@ export function JoinScreen({
   const wait = useWait(trouble);
   const refused = fieldTroubles(trouble, wait);
   const codeTrouble = /^\d{4}$/.test(dayCode) ? null : 'The day code is four digits.';
+  useEffect(() => {
+    if (trouble) document.getElementById('day-code')?.focus();
+  }, [trouble]);
   const join = () => {
     setAsked(true);
+    if (codeTrouble) document.getElementById('day-code')?.focus();
     if (codeTrouble || wait > 0) return;
     send(async () => {
       await call(enrol, {

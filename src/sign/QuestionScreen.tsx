@@ -95,8 +95,8 @@ function Answer({
     <button
       type="button"
       aria-pressed={mark !== null}
-      disabled={disabled}
-      onClick={onChoose}
+      aria-disabled={disabled}
+      onClick={() => !disabled && onChoose()}
       className={`block min-h-14 w-full rounded-[3px] border-2 bg-sheet px-4 py-3 text-left text-ink ${edge} ${disabled && mark === null ? 'text-ink-soft' : ''}`}
     >
       {words}

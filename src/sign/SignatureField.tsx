@@ -33,7 +33,7 @@ export function SignatureField({
           role="img"
           aria-label={count === 0 ? 'Box to sign in, empty' : `Box to sign in, ${count} strokes drawn`}
           aria-describedby="signature-trouble"
-          className="block h-[clamp(130px,38dvh,240px)] w-full touch-none rounded-[3px] border-2 border-edge bg-white"
+          className="block h-[clamp(130px,38dvh,240px)] w-full touch-none rounded-[3px] border-2 border-edge bg-[#ffffff]"
         />
         <span
           aria-hidden

@@ -7,7 +7,16 @@ export function Toaster() {
       position="bottom-center"
       offset={72}
       mobileOffset={{ bottom: 130 }}
-      toastOptions={{ style: { background: 'var(--color-ink)', color: 'var(--color-paper)', border: 0, borderRadius: '3px', fontFamily: 'inherit', fontSize: '1rem' } }}
+      toastOptions={{
+        style: {
+          background: 'var(--color-ink)',
+          color: 'var(--color-paper)',
+          border: 0,
+          borderRadius: '3px',
+          fontFamily: 'inherit',
+          fontSize: '1rem',
+        },
+      }}
     />
   );
 }

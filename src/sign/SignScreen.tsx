@@ -36,6 +36,7 @@ export function SignScreen({
   const sign = async () => {
     setAsked(true);
     const signature = method === 'drawn' ? drawnOf(ink) : typedOf(typed);
+    if (!signature) document.getElementById('signature')?.scrollIntoView({ block: 'center' });
     // A second tap while the first is being kept would be a second signature.
     if (!signature || sending.current) return;
     sending.current = true;
@@ -70,11 +71,13 @@ export function SignScreen({
       <p className="my-3">
         Signing: <strong>{signer}</strong>
       </p>
-      {method === 'drawn' ? (
-        <SignatureField ink={ink} onInk={setInk} trouble={asked ? inkTrouble : null} />
-      ) : (
-        <TypedFields typed={typed} onTyped={setTyped} asked={asked} />
-      )}
+      <div id="signature">
+        {method === 'drawn' ? (
+          <SignatureField ink={ink} onInk={setInk} trouble={asked ? inkTrouble : null} />
+        ) : (
+          <TypedFields typed={typed} onTyped={setTyped} asked={asked} />
+        )}
+      </div>
       <BigButton
         kind="quiet"
         className="mt-2"

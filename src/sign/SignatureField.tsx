@@ -27,40 +27,44 @@ export function SignatureField({
   const count = ink.strokes.length;
   return (
     <div>
-      <div className="relative">
-        <canvas
-          ref={canvas}
-          role="img"
-          aria-label={count === 0 ? 'Box to sign in, empty' : `Box to sign in, ${count} strokes drawn`}
-          aria-describedby="signature-trouble"
-          className="block h-[clamp(130px,38dvh,240px)] w-full touch-none rounded-[3px] border-2 border-edge bg-[#ffffff]"
-        />
-        <span
-          aria-hidden
-          className="pointer-events-none absolute inset-x-4 bottom-8 border-b border-[#7C878C]"
-        />
-        {count === 0 && (
-          <span aria-hidden className="pointer-events-none absolute bottom-9 left-4 text-[#556067]">
-            Sign here with a finger
-          </span>
-        )}
+      <div className="flex flex-col gap-2 landscape:flex-row">
+        <div className="relative grow rounded-[3px] border-2 border-edge">
+          <canvas
+            ref={canvas}
+            role="img"
+            aria-label={count === 0 ? 'Box to sign in, empty' : `Box to sign in, ${strokesInWords(count)}`}
+            aria-describedby="signature-trouble"
+            className="block h-[clamp(130px,38dvh,240px)] w-full touch-none bg-[#ffffff]"
+          />
+          <span
+            aria-hidden
+            className="pointer-events-none absolute inset-x-4 bottom-8 border-b border-[#7C878C]"
+          />
+          {count === 0 && (
+            <span aria-hidden className="pointer-events-none absolute bottom-9 left-4 text-[#556067]">
+              Sign here with a finger
+            </span>
+          )}
+        </div>
+        <div className="flex gap-2 landscape:flex-col">
+          <BigButton
+            kind="quiet"
+            disabled={count === 0}
+            onClick={() => onInk({ ...ink, strokes: ink.strokes.slice(0, -1) })}
+          >
+            Undo
+          </BigButton>
+          <BigButton kind="quiet" disabled={count === 0} onClick={() => onInk(noInk)}>
+            Clear
+          </BigButton>
+        </div>
       </div>
       <Trouble id="signature-trouble" words={trouble} />
-      <div className="mt-2 flex gap-2">
-        <BigButton
-          kind="quiet"
-          disabled={count === 0}
-          onClick={() => onInk({ ...ink, strokes: ink.strokes.slice(0, -1) })}
-        >
-          Undo
-        </BigButton>
-        <BigButton kind="quiet" disabled={count === 0} onClick={() => onInk(noInk)}>
-          Clear
-        </BigButton>
-      </div>
     </div>
   );
 }
+
+const strokesInWords = (count: number) => (count === 1 ? '1 stroke drawn' : `${count} strokes drawn`);
 
 function usePad(
   canvas: React.RefObject<HTMLCanvasElement | null>,

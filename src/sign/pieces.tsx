@@ -2,7 +2,7 @@ import { type ButtonHTMLAttributes, type ReactNode, useEffect, useRef } from 're
 
 const kinds = {
   main: 'border-transparent bg-chalk text-on-chalk font-semibold',
-  quiet: 'border-edge bg-sheet text-ink',
+  quiet: 'border-edge bg-sheet text-ink aria-pressed:border-chalk aria-pressed:bg-chalk-wash',
   stop: 'border-oxide bg-sheet text-oxide font-semibold',
 };
 

@@ -66,7 +66,7 @@ function Receipt({ outgoing }: { outgoing: Outgoing }) {
         {signature.method === 'drawn' ? (
           <img
             alt={`Signature of ${outgoing.person}`}
-            className="mt-1 h-20 max-w-full rounded-[3px] bg-[#ffffff] p-1"
+            className="mt-1 w-full max-w-72 rounded-[3px] bg-[#ffffff] p-1"
             src={`data:image/svg+xml,${encodeURIComponent(signatureSvg(signature.drawn))}`}
           />
         ) : (

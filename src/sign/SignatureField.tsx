@@ -1,7 +1,17 @@
 import { useEffect, useRef, useState } from 'react';
 import SignaturePad, { type PointGroup } from 'signature_pad';
 import { BigButton, Trouble } from './pieces.tsx';
-import { fitInto, type Ink, noInk, type Size, type Stroke, toCanvas, toFrame } from './strokes.ts';
+import {
+  extentOf,
+  type Fit,
+  fitInto,
+  type Ink,
+  noInk,
+  type Size,
+  type Stroke,
+  toCanvas,
+  toFrame,
+} from './strokes.ts';
 
 const pen: Omit<PointGroup, 'points'> = {
   penColor: '#1A2226',
@@ -73,6 +83,7 @@ function usePad(
 ): void {
   const pad = useRef<SignaturePad | null>(null);
   const size = useSizeOf(canvas);
+  const fit = useRef<Fit>({ scale: 1, dx: 0, dy: 0 });
   const latest = useRef({ ink, onInk, size });
   useEffect(() => {
     latest.current = { ink, onInk, size };
@@ -87,8 +98,7 @@ function usePad(
       const points = created.toData().at(-1)?.points;
       if (!points || !canvasSize) return;
       const frame = before.frame ?? canvasSize;
-      const fit = fitInto(frame, canvasSize);
-      const stroke = points.map(({ x, y, time }) => toFrame(fit, { x, y, time }));
+      const stroke = points.map(({ x, y, time }) => toFrame(fit.current, { x, y, time }));
       const after = { frame, strokes: [...before.strokes, stroke] };
       latest.current = { ...latest.current, ink: after };
       tell(after);
@@ -104,9 +114,13 @@ function usePad(
   useEffect(() => {
     const box = canvas.current;
     if (!box || !size || !pad.current) return;
-    if (!fitCanvas(box, size) && pad.current.toData().length === ink.strokes.length) return;
-    const fit = fitInto(ink.frame ?? size, size);
-    pad.current.fromData(ink.strokes.map((stroke) => groupOf(stroke.map((point) => toCanvas(fit, point)))));
+    const resized = fitCanvas(box, size);
+    if (!resized && pad.current.toData().length === ink.strokes.length) return;
+    // What is drawn keeps its place while the box keeps its size, even where a stroke went over the edge.
+    if (resized || ink.strokes.length === 0)
+      fit.current = fitInto(extentOf(ink.frame ?? size, ink.strokes), size);
+    const shown = fit.current;
+    pad.current.fromData(ink.strokes.map((stroke) => groupOf(stroke.map((point) => toCanvas(shown, point)))));
   }, [canvas, ink, size]);
 }
 

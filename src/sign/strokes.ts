@@ -10,13 +10,28 @@ export const noInk: Ink = { frame: null, strokes: [] };
 /** Uniform scale and shift from the frame to the canvas as it stands now. */
 export type Fit = { scale: number; dx: number; dy: number };
 
-/** Lays the frame into the canvas, whole and undistorted, so that a turned phone shows the same signature. */
-export function fitInto(frame: Size, canvas: Size): Fit {
-  const scale = Math.min(canvas.width / frame.width, canvas.height / frame.height);
+/** What must be seen: the frame, and ink that went over its edge. */
+export type Extent = Size & { left: number; top: number };
+
+export function extentOf(frame: Size, strokes: Stroke[]): Extent {
+  const points = strokes.flat();
+  const left = Math.floor(Math.min(0, ...points.map(({ x }) => x)));
+  const top = Math.floor(Math.min(0, ...points.map(({ y }) => y)));
+  return {
+    left,
+    top,
+    width: Math.ceil(Math.max(frame.width, ...points.map(({ x }) => x))) - left,
+    height: Math.ceil(Math.max(frame.height, ...points.map(({ y }) => y))) - top,
+  };
+}
+
+/** Lays the extent into the canvas, whole and undistorted, so that a turned phone shows the same signature. */
+export function fitInto({ left, top, width, height }: Extent, canvas: Size): Fit {
+  const scale = Math.min(canvas.width / width, canvas.height / height);
   return {
     scale,
-    dx: (canvas.width - frame.width * scale) / 2,
-    dy: (canvas.height - frame.height * scale) / 2,
+    dx: (canvas.width - width * scale) / 2 - left * scale,
+    dy: (canvas.height - height * scale) / 2 - top * scale,
   };
 }
 
@@ -41,15 +56,11 @@ const longest = 3_600_000;
  * edge, so that no part of a signature is cut off.
  */
 export function drawnSignatureOf(frame: Size, strokes: Stroke[]): DrawnSignature {
-  const points = strokes.flat();
-  const start = Math.min(...points.map(({ time }) => time));
-  const left = Math.floor(Math.min(0, ...points.map(({ x }) => x)));
-  const top = Math.floor(Math.min(0, ...points.map(({ y }) => y)));
-  const right = Math.ceil(Math.max(frame.width, ...points.map(({ x }) => x)));
-  const bottom = Math.ceil(Math.max(frame.height, ...points.map(({ y }) => y)));
+  const start = Math.min(...strokes.flat().map(({ time }) => time));
+  const { left, top, width, height } = extentOf(frame, strokes);
   return {
-    width: Math.max(50, right - left),
-    height: Math.max(50, bottom - top),
+    width: Math.max(50, width),
+    height: Math.max(50, height),
     strokes: strokes
       .filter((stroke) => stroke.length > 0)
       .slice(0, mostStrokes)

@@ -34,7 +34,7 @@ function step(number: number, changes: Partial<OutlineStep> = {}): OutlineStep {
       competencies: [],
       equipment: [],
       permits: [],
-    } as unknown as OutlineStep['needs'],
+    },
     questions: [],
     sources: [],
     caution: '',

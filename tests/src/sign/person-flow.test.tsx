@@ -112,6 +112,9 @@ async function signTyped() {
   await press('Sign');
 }
 
+// jsdom has no layout to scroll.
+Element.prototype.scrollIntoView = () => undefined;
+
 beforeEach(() => localStorage.clear());
 
 test('a worker reads what changed, the cards, answers, signs typed, and holds the receipt with the site’s time', async () => {

@@ -3,6 +3,7 @@ import { expect, test } from 'vitest';
 import { drawnSignatureSchema } from '#shared/signons/signature.ts';
 import {
   drawnSignatureOf,
+  extentOf,
   fitInto,
   inkRefusal,
   type Stroke,
@@ -24,27 +25,37 @@ const strokes = fc.array(fc.array(point, { minLength: 1, maxLength: 10 }), { min
 
 test('turning the phone and turning it back leaves every point where it was drawn', () => {
   fc.assert(
-    fc.property(size, size, point, (frame, canvas, drawn) => {
-      const fit = fitInto(frame, canvas);
-      const there = toFrame(fit, toCanvas(fit, drawn));
-      expect(there.x).toBeCloseTo(drawn.x, 6);
-      expect(there.y).toBeCloseTo(drawn.y, 6);
-      expect(there.time).toBe(drawn.time);
+    fc.property(size, size, strokes, (frame, canvas, ink) => {
+      const fit = fitInto(extentOf(frame, ink), canvas);
+      for (const drawn of ink.flat()) {
+        const there = toFrame(fit, toCanvas(fit, drawn));
+        expect(there.x).toBeCloseTo(drawn.x, 6);
+        expect(there.y).toBeCloseTo(drawn.y, 6);
+        expect(there.time).toBe(drawn.time);
+      }
     }),
   );
 });
 
-test('the whole frame lies within the turned canvas, undistorted', () => {
+test('all ink lies within the turned canvas, undistorted, also where it went over the edge before', () => {
   fc.assert(
-    fc.property(size, size, (frame, canvas) => {
-      const fit = fitInto(frame, canvas);
-      const far = toCanvas(fit, { x: frame.width, y: frame.height, time: 0 });
-      expect(fit.dx).toBeGreaterThanOrEqual(-1e-9);
-      expect(fit.dy).toBeGreaterThanOrEqual(-1e-9);
-      expect(far.x).toBeLessThanOrEqual(canvas.width + 1e-6);
-      expect(far.y).toBeLessThanOrEqual(canvas.height + 1e-6);
+    fc.property(size, size, strokes, (frame, canvas, ink) => {
+      const fit = fitInto(extentOf(frame, ink), canvas);
+      for (const drawn of ink.flat()) {
+        const { x, y } = toCanvas(fit, drawn);
+        expect(x).toBeGreaterThanOrEqual(-1e-6);
+        expect(y).toBeGreaterThanOrEqual(-1e-6);
+        expect(x).toBeLessThanOrEqual(canvas.width + 1e-6);
+        expect(y).toBeLessThanOrEqual(canvas.height + 1e-6);
+      }
     }),
   );
+});
+
+test('an empty box of the same size is shown as it is', () => {
+  const box = { width: 320, height: 160 };
+
+  expect(fitInto(extentOf(box, []), box)).toEqual({ scale: 1, dx: 0, dy: 0 });
 });
 
 test('whatever was drawn, what is kept fits the contract and no point lies outside its frame', () => {

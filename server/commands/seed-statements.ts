@@ -1,6 +1,6 @@
 import { newId } from '#shared/kernel/ids.ts';
 import type { DrawnSignature } from '#shared/signons/signature.ts';
-import type { NodeJson } from '#shared/statements/document/document.ts';
+import type { NodeJson } from '#shared/statements/document/json.ts';
 import type { Db } from '../platform/db.ts';
 import { statementDeclaration } from '../signons/declarations.ts';
 import { readingOf } from '../signons/reading.service.ts';

@@ -1,7 +1,8 @@
 import { and, eq } from 'drizzle-orm';
 import type { z } from 'zod';
 import { Refusal } from '#shared/kernel/refusal.ts';
-import { documentFormat, type NodeJson, parseDocument } from '#shared/statements/document/document.ts';
+import { parseDocument } from '#shared/statements/document/document.ts';
+import { documentFormat, type NodeJson } from '#shared/statements/document/json.ts';
 import { documentFromBlocks, emptyDocument } from '#shared/statements/document/from-block.ts';
 import type {
   createStatementBody,

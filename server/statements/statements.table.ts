@@ -11,7 +11,7 @@ import {
   unique,
   uuid,
 } from 'drizzle-orm/pg-core';
-import type { NodeJson } from '../../shared/statements/document/document.ts';
+import type { NodeJson } from '../../shared/statements/document/json.ts';
 import { accounts, organisations } from '../account/account.table.ts';
 import { sites } from '../sites/sites.table.ts';
 

@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import type { FillIn } from '../statements/document/attributes.ts';
-import type { NodeJson } from '../statements/document/document.ts';
-import { fillInText } from '../statements/document/nodes.ts';
+import type { NodeJson } from '../statements/document/json.ts';
+import { fillInText } from '../statements/document/fill-in-text.ts';
 
 /** The inline content of a node: text with its marks, fill-ins, line breaks. */
 export function Inline({ node }: { node: NodeJson | undefined }) {

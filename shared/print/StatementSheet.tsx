@@ -1,7 +1,7 @@
 import { formatDay, formatInstant } from '../kernel/work-date.ts';
 import { shortHash } from '../kernel/canonical.ts';
 import { bandNames, bands } from '../risk/matrix.ts';
-import type { NodeJson } from '../statements/document/document.ts';
+import type { NodeJson } from '../statements/document/json.ts';
 import type { Frozen } from '../statements/frozen.ts';
 import type { Sheet } from '../statements/statements.api.ts';
 import { Prose } from './Prose.tsx';

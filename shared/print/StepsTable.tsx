@@ -1,6 +1,6 @@
 import { controlLevelNames, controlTier, type ControlLevel } from '../library/block.ts';
 import { bandNames, bandOf, type Matrix, type Rating } from '../risk/matrix.ts';
-import type { NodeJson } from '../statements/document/document.ts';
+import type { NodeJson } from '../statements/document/json.ts';
 import { childrenOf, Inline, Prose, proseTypes } from './Prose.tsx';
 
 type Numbered = { node: NodeJson; number: number };

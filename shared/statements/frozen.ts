@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { idSchema } from '../kernel/ids.ts';
 import { profileSchema } from '../profiles/profile.ts';
 import { matrixSchema } from '../risk/matrix.ts';
-import { documentSchema } from './document/document.ts';
+import { documentSchema } from './document/json.ts';
 import type { Outline } from './document/outline.ts';
 
 /**

@@ -3,7 +3,7 @@ import { done } from '../account/account.api.ts';
 import { endpoint } from '../kernel/endpoint.ts';
 import { idParams, idSchema } from '../kernel/ids.ts';
 import { profileSchema } from '../profiles/profile.ts';
-import { documentSchema } from './document/document.ts';
+import { documentSchema } from './document/json.ts';
 import { frozenSchema } from './frozen.ts';
 
 export const titleSchema = z

@@ -1,7 +1,7 @@
 import { Download } from 'lucide-react';
 import { formatInstant } from '#shared/kernel/work-date.ts';
 import { outlineOf } from '#shared/statements/document/outline.ts';
-import type { NodeJson } from '#shared/statements/document/document.ts';
+import type { NodeJson } from '#shared/statements/document/json.ts';
 import type { DraftConflict } from '#shared/statements/statements.api.ts';
 import { Button } from '../ui/Button.tsx';
 import { Dialog } from '../ui/Dialog.tsx';

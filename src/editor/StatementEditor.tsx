@@ -3,7 +3,7 @@ import { type Editor, EditorContent, useEditorState } from '@tiptap/react';
 import { BookOpen, ListChecks, ListTree } from 'lucide-react';
 import { Tabs } from 'radix-ui';
 import { type ReactNode, useMemo, useState } from 'react';
-import type { NodeJson } from '#shared/statements/document/document.ts';
+import type { NodeJson } from '#shared/statements/document/json.ts';
 import { outlineOf } from '#shared/statements/document/outline.ts';
 import { blocks, type Gap, gapsBeforeIssue } from '#shared/statements/readiness.ts';
 import type { Statement } from '#shared/statements/statements.api.ts';

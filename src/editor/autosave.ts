@@ -1,5 +1,5 @@
 import { Refusal } from '#shared/kernel/refusal.ts';
-import type { NodeJson } from '#shared/statements/document/document.ts';
+import type { NodeJson } from '#shared/statements/document/json.ts';
 import type { DraftConflict } from '#shared/statements/statements.api.ts';
 
 /** A draft as it is sent: what is written, and the version that it was written over. */

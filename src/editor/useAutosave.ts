@@ -1,6 +1,6 @@
 import { useCallback, useEffect, useRef, useState } from 'react';
 import { type Statement, saveDraft } from '#shared/statements/statements.api.ts';
-import type { NodeJson } from '#shared/statements/document/document.ts';
+import type { NodeJson } from '#shared/statements/document/json.ts';
 import { call } from '../lib/call.ts';
 import { type Autosave, createAutosave, type SaveState } from './autosave.ts';
 import { keepDraft } from './kept-drafts.ts';

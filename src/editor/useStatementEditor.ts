@@ -3,7 +3,7 @@ import { type Editor, useEditor } from '@tiptap/react';
 import { useRef, useState } from 'react';
 import { toast } from 'sonner';
 import type { Matrix } from '#shared/risk/matrix.ts';
-import type { NodeJson } from '#shared/statements/document/document.ts';
+import type { NodeJson } from '#shared/statements/document/json.ts';
 import { wordsOf } from '../lib/query.ts';
 import {
   apply,

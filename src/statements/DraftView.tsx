@@ -2,7 +2,7 @@ import { Printer, Send, Trash2 } from 'lucide-react';
 import { useCallback, useRef, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import { toast } from 'sonner';
-import type { NodeJson } from '#shared/statements/document/document.ts';
+import type { NodeJson } from '#shared/statements/document/json.ts';
 import { discardStatement, type Statement, submitDraft } from '#shared/statements/statements.api.ts';
 import { paths } from '../app/paths.ts';
 import { ConflictDialog } from '../editor/ConflictDialog.tsx';

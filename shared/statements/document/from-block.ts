@@ -1,7 +1,7 @@
 import { newId } from '../../kernel/ids.ts';
 import type { Block } from '../../library/block.ts';
 import { type Needs, type Origin, noNeeds, noParticulars } from './attributes.ts';
-import type { NodeJson } from './document.ts';
+import type { NodeJson } from './json.ts';
 
 /** A statement with nothing in it but an untouched title block. */
 export function emptyDocument(): NodeJson {

@@ -1,6 +1,7 @@
 import { type Attributes, type Extensions, Node, mergeAttributes } from '@tiptap/core';
 import { StarterKit } from '@tiptap/starter-kit';
 import { noNeeds, noParticulars } from './attributes.ts';
+import { fillInText } from './fill-in-text.ts';
 
 /** Attributes kept as JSON in `data-…`, so that copying within the editor and between statements keeps them whole. */
 function jsonAttributes(defaults: Record<string, unknown>): Attributes {
@@ -156,20 +157,6 @@ export const FillIn = Node.create({
   ],
   renderText: ({ node }) => fillInText(node.attrs),
 });
-
-/** How a fill-in reads in running text: its value with unit, or the hole with its label. */
-export function fillInText({
-  label,
-  unit,
-  value,
-}: {
-  label?: string;
-  unit?: string;
-  value?: string;
-}): string {
-  if (value) return unit ? `${value} ${unit}` : value;
-  return `[${label ?? 'fill in'}${unit ? `, ${unit}` : ''}]`;
-}
 
 /** The whole schema of a statement. The editor takes these and adds behaviour; the server validates with them. */
 export const documentExtensions: Extensions = [

@@ -1,8 +1,8 @@
 import type { CheckQuestion, ControlLevel, HazardCategory } from '../../library/block.ts';
 import type { Rating } from '../../risk/matrix.ts';
 import type { FillIn, Needs, Origin, Particulars } from './attributes.ts';
-import type { NodeJson } from './document.ts';
-import { fillInText } from './nodes.ts';
+import type { NodeJson } from './json.ts';
+import { fillInText } from './fill-in-text.ts';
 
 export type OutlineControl = {
   id: string;

@@ -23,7 +23,8 @@ export type Throttles = {
 export function createThrottles(pool: Pool): Throttles {
   const limiterOf = (name: LimitName) =>
     new RateLimiterPostgres({
-      storeClient: pool,
+      storeClient: unnamed(pool),
+      storeType: 'pool',
       tableName: 'throttles',
       tableCreated: true,
       keyPrefix: name,
@@ -54,6 +55,11 @@ export function createThrottles(pool: Pool): Throttles {
     },
   };
 }
+
+/** The embedded engine's connections share one backend, where a statement prepared under a name stands in everybody's way. */
+const unnamed = (pool: Pool) => ({
+  query: ({ text, values }: { name?: string; text: string; values: unknown[] }) => pool.query(text, values),
+});
 
 function waitWords(seconds: number): string {
   return seconds <= 90 ? `${seconds} seconds` : `${Math.ceil(seconds / 60)} minutes`;

@@ -185,10 +185,10 @@ function HighRisk({ ticked, readOnly, change }: { ticked: string[]; readOnly: bo
       <legend className="text-sm font-medium">{profile.highRiskTerm}</legend>
       <div className="mt-1 grid gap-x-4 sm:grid-cols-2">
         {profile.highRisk.map(({ key, words, clause }) => (
-          <label key={key} className="flex items-start gap-2 py-1">
+          <label key={key} className="flex min-h-8 items-start gap-2 py-1 pointer-coarse:min-h-12">
             <input
               type="checkbox"
-              className="mt-1 size-4 shrink-0 accent-chalk"
+              className="size-6 shrink-0 accent-chalk"
               checked={ticked.includes(key)}
               disabled={readOnly}
               onChange={() => toggle(key)}

@@ -31,7 +31,7 @@ export function AccountMenu() {
   return (
     <DropdownMenu.Root>
       <DropdownMenu.Trigger
-        className="flex min-h-10 items-center gap-2 rounded border border-edge px-2.5 text-ink"
+        className="flex min-h-10 shrink-0 items-center gap-2 rounded border border-edge px-2.5 text-ink pointer-coarse:min-h-12"
         aria-label={`Account of ${session.account.name}`}
       >
         <UserRound size={18} strokeWidth={1.75} aria-hidden />

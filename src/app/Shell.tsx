@@ -93,7 +93,7 @@ export function Shell() {
 function Header({ role, organisation, invented }: { role: Role; organisation: string; invented: boolean }) {
   return (
     <header className="no-print border-b border-zinc bg-sheet">
-      <div className="flex flex-wrap items-center gap-x-5 gap-y-1 px-4 py-2 sm:px-6">
+      <div className="flex items-center gap-x-5 px-4 py-2 sm:px-6">
         <Link to={paths.home} className="flex items-center gap-2 font-semibold text-ink no-underline">
           <Mark />
           Toeboard
@@ -111,7 +111,7 @@ function Header({ role, organisation, invented }: { role: Role; organisation: st
             </NavLink>
           ))}
         </nav>
-        <div className="ml-auto flex items-center gap-2">
+        <div className="ml-auto flex min-w-0 items-center gap-2">
           <SiteChooser />
           <AccountMenu />
         </div>

@@ -9,7 +9,7 @@ export function SiteChooser() {
       aria-label="Site in hand"
       value={siteId}
       onChange={(event) => chooseSite(event.target.value)}
-      className="min-h-10 max-w-44 rounded border border-edge bg-sheet px-2 text-ink sm:max-w-64"
+      className="min-h-10 min-w-0 max-w-40 truncate rounded border border-edge bg-sheet px-2 text-ink pointer-coarse:min-h-12 sm:max-w-64"
     >
       {sites.map(({ id, name }) => (
         <option key={id} value={id}>

@@ -27,7 +27,7 @@ import {
 } from './edits.ts';
 
 const button =
-  'inline-flex min-h-9 min-w-9 items-center justify-center gap-1.5 rounded px-2 hover:bg-chalk-wash disabled:opacity-40 aria-pressed:bg-chalk-wash aria-pressed:text-chalk pointer-coarse:min-h-12 pointer-coarse:min-w-12';
+  'inline-flex min-h-9 min-w-9 shrink-0 items-center justify-center gap-1.5 rounded px-2 hover:bg-chalk-wash disabled:opacity-40 aria-pressed:bg-chalk-wash aria-pressed:text-chalk pointer-coarse:min-h-12 pointer-coarse:min-w-12';
 
 /** The tools over the document; everything here can also be done from the keyboard. */
 export function Toolbar({ editor }: { editor: Editor }) {
@@ -51,7 +51,7 @@ export function Toolbar({ editor }: { editor: Editor }) {
     <Tool name={name} keys={keys} icon={icon} pressed={pressed} onPress={run} />
   );
   return (
-    <div role="toolbar" aria-label="Tools" className="flex flex-wrap items-center gap-0.5">
+    <div role="toolbar" aria-label="Tools" className="flex items-center gap-0.5 overflow-x-auto lg:flex-wrap">
       <Tool
         name="Undo"
         keys="Ctrl Z"

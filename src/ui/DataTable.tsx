@@ -63,7 +63,7 @@ export function DataTable<Row>({ label, rows, columns, keyOf, linkOf, empty, sor
                   className={`px-2 py-1.5 align-top pointer-coarse:py-2.5 ${column.numeric ? 'text-right' : ''} ${hidden(column)}`}
                 >
                   {index === 0 && linkOf ? (
-                    <Link to={linkOf(row)} className="font-medium">
+                    <Link to={linkOf(row)} className="inline-block min-h-6 font-medium pointer-coarse:py-1">
                       {column.cell(row)}
                     </Link>
                   ) : (

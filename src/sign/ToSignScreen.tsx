@@ -1,39 +1,57 @@
 import { formatDay, formatInstant, workDateOf } from '#shared/kernel/work-date.ts';
 import type { ToSign } from '#shared/signons/signons.api.ts';
-import type { Outbox, Outgoing } from './outbox.ts';
+import type { Outbox } from './outbox.ts';
 import { OutgoingStatus } from './OutgoingStatus.tsx';
 import { BigButton, Screen, Section } from './pieces.tsx';
-import { type Task, tasksOf } from './tasks.ts';
+import type { Task } from './tasks.ts';
 
 /** What one person has to sign at one site, and what is signed already. */
 export function ToSignScreen({
   toSign,
   outbox,
-  outgoing,
+  tasks,
   footer,
+  actions,
   onOpen,
 }: {
   toSign: ToSign;
   outbox: Outbox;
-  outgoing: Outgoing[];
-  footer: React.ReactNode;
+  tasks: Task[];
+  footer?: React.ReactNode;
+  actions?: React.ReactNode;
   onOpen: (task: Task) => void;
 }) {
-  const tasks = tasksOf(toSign, outgoing);
+  const open = tasks.filter(({ isOpen }) => isOpen).length;
+  return (
+    <Screen title={headingOf(toSign.person.name, open)} actions={actions}>
+      <TaskList toSign={toSign} tasks={tasks} outbox={outbox} onOpen={onOpen} />
+      {footer}
+    </Screen>
+  );
+}
+
+/** The things to sign as cards, and the signed ones under them. */
+export function TaskList({
+  toSign,
+  tasks,
+  outbox,
+  onOpen,
+}: {
+  toSign: ToSign;
+  tasks: Task[];
+  outbox: Outbox;
+  onOpen: (task: Task) => void;
+}) {
   const open = tasks.filter(({ isOpen }) => isOpen);
   const finished = tasks.filter(({ isOpen }) => !isOpen);
   return (
-    <Screen title={headingOf(toSign.person.name, open.length)}>
-      <p className="text-ink-soft">
-        {toSign.site.name}, {toSign.organisation}
-      </p>
+    <>
       {tasks.length === 0 && (
-        <p className="mt-4 text-[1.125rem]">
-          No statement is in force for this site and no talk is open today. Ask your supervisor before you
-          start.
+        <p className="mt-2 text-[1.125rem]">
+          No statement is in force for this site and no talk is open. Ask your supervisor before you start.
         </p>
       )}
-      <ul className="mt-4 space-y-4">
+      <ul className="mt-3 space-y-4">
         {open.map((task, index) => (
           <OpenTask key={task.key} task={task} first={index === 0} toSign={toSign} onOpen={onOpen} />
         ))}
@@ -47,8 +65,7 @@ export function ToSignScreen({
           </ul>
         </Section>
       )}
-      {footer}
-    </Screen>
+    </>
   );
 }
 

@@ -6,12 +6,14 @@ import { useOutgoing } from './useOutgoing.ts';
 /** What is still only on this device, and what the server refused; nothing is shown where there is nothing. */
 export function UnsentNotice({ outbox }: { outbox: Outbox }) {
   const outgoing = useOutgoing(outbox);
-  const waiting = outgoing.filter(({ state }) => state === 'waiting');
-  const refused = outgoing.filter(({ state }) => state === 'refused');
+  const mine = outgoing.filter(({ carrier }) => outbox.maySend(carrier));
+  const waiting = mine.filter(({ state }) => state === 'waiting');
+  const others = outgoing.filter((kept) => kept.state === 'waiting' && !mine.includes(kept)).length;
+  const refused = mine.filter(({ state }) => state === 'refused');
   return (
     <div
       role="status"
-      className={waiting.length + refused.length > 0 ? 'mx-auto mt-4 w-full max-w-[40rem] px-4' : ''}
+      className={waiting.length + refused.length + others > 0 ? 'mx-auto mt-4 w-full max-w-[40rem] px-4' : ''}
     >
       {waiting.length > 0 && (
         <div className="border-l-8 border-line bg-sheet py-3 pl-3 pr-2">
@@ -31,6 +33,12 @@ export function UnsentNotice({ outbox }: { outbox: Outbox }) {
           </BigButton>
         </div>
       )}
+      {others > 0 && (
+        <p className="mt-2 border-l-8 border-zinc bg-sheet py-3 pl-3 pr-2">
+          {others === 1 ? '1 signature waits' : `${others} signatures wait`} here for somebody else: it is
+          sent once whoever made it is known to this device again.
+        </p>
+      )}
       {refused.map((kept) => (
         <Refused key={kept.id} kept={kept} outbox={outbox} />
       ))}
@@ -44,7 +52,8 @@ function Refused({ kept, outbox }: { kept: Outgoing; outbox: Outbox }) {
     <div className="mt-2 border-l-8 border-oxide bg-sheet py-3 pl-3 pr-2">
       <p className="font-semibold text-oxide">The signature of {kept.person} was not accepted.</p>
       <p>
-        {kept.title}: {kept.trouble} It stays on this phone until you remove it. Show this to your supervisor.
+        {kept.title}: {kept.trouble} It stays on this device until you remove it. Show this to your
+        supervisor.
       </p>
       <div className="mt-2 flex flex-wrap gap-2">
         <BigButton kind="quiet" onClick={() => void outbox.tryAgain(kept.id)}>

@@ -8,7 +8,7 @@ export type AttendanceBody = z.infer<typeof attendanceBody>;
 /** Who carries a signature to the server: a worker's own phone, or somebody signed in. A signature is never sent by anybody else. */
 export type Carrier =
   | { kind: 'device'; token: string; personId: string }
-  | { kind: 'account'; accountId: string; siteId: string; personId: string };
+  | { kind: 'account'; accountId: string; orgId: string; siteId: string; personId: string };
 
 /** A signature on its way. The id is made before it is kept, so that a resend changes nothing. */
 export type Outgoing = {
@@ -39,6 +39,8 @@ export type Outbox = {
   /** Puts a refused signature back in the queue. */
   tryAgain: (id: string) => Promise<void>;
   forget: (id: string) => Promise<void>;
+  /** Whether whoever is at the device now may send it. */
+  maySend: (carrier: Carrier) => boolean;
   /** False where the device keeps nothing once the page is closed. */
   isDurable: () => boolean;
 };
@@ -112,6 +114,7 @@ export function createOutbox({
       show(items.filter((kept) => kept.id !== id));
       await store.remove(id);
     },
+    maySend,
     isDurable: () => store.durable,
   };
 }

@@ -38,7 +38,9 @@ export function Screen({
   const heading = useRef<HTMLHeadingElement>(null);
   useEffect(() => {
     heading.current?.focus({ preventScroll: true });
-    window.scrollTo(0, 0);
+    const frame = heading.current?.closest('[data-scroll-frame]');
+    if (frame) frame.scrollTop = 0;
+    else window.scrollTo(0, 0);
   }, [title]);
   return (
     <div className="flex min-h-full grow flex-col" lang={language}>

@@ -95,7 +95,7 @@ function place(send: Send, changes: Partial<SignApi> = {}) {
   const api: SignApi = {
     toSign: async () => toSign,
     reading: async () => reading,
-    carrier: { kind: 'account', accountId: 'a', siteId: 'site', personId: 'kit' },
+    carrier: { kind: 'account', accountId: 'a', orgId: 'o', siteId: 'site', personId: 'kit' },
     outbox,
     ...changes,
   };

@@ -40,13 +40,16 @@ function cardOf(step: OutlineStep): CrewCard {
   };
 }
 
-/** Words a person reads on the cards, for judging the reading time. */
+/** Controls that a card shows before the rest are asked for: those highest in the hierarchy of control. */
+export const controlsShownFirst = 4;
+
+/** Words a person reads on the cards, for judging the reading time; what a card shows only when asked is not counted. */
 export function wordsOnCards(cards: CrewCard[]): number {
   const text = cards.flatMap(({ title, words, hurts, controls, stopIf, holdPoints }) => [
     title,
     ...words,
     ...hurts,
-    ...controls.map((control) => control.text),
+    ...controls.slice(0, controlsShownFirst).map((control) => control.text),
     ...stopIf,
     ...holdPoints,
   ]);

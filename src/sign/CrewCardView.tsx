@@ -1,9 +1,7 @@
 import { useState } from 'react';
+import { controlsShownFirst } from '#shared/signons/cards.ts';
 import { BigButton, Section } from './pieces.tsx';
 import type { Card } from './spoken.ts';
-
-/** Controls shown before the rest are asked for: those highest in the hierarchy of control. */
-const firstFew = 4;
 
 /** One step as a worker reads it: what can hurt you, when to stop, what we do. */
 export function CrewCardView({ card }: { card: Card }) {
@@ -53,7 +51,7 @@ function Lines({ lines }: { lines: string[] }) {
 
 function Controls({ controls }: Pick<Card, 'controls'>) {
   const [all, setAll] = useState(false);
-  const shown = all ? controls : controls.slice(0, firstFew);
+  const shown = all ? controls : controls.slice(0, controlsShownFirst);
   const hidden = controls.length - shown.length;
   return (
     <Section title="What we do">
@@ -65,7 +63,7 @@ function Controls({ controls }: Pick<Card, 'controls'>) {
           </li>
         ))}
       </ul>
-      {controls.length > firstFew && (
+      {controls.length > controlsShownFirst && (
         <BigButton kind="quiet" className="mt-3" aria-expanded={all} onClick={() => setAll(!all)}>
           {all ? 'Show the first few' : `Show ${hidden} more`}
         </BigButton>

@@ -1,26 +1,7 @@
-import { useEffect, useRef, useState } from 'react';
-import SignaturePad, { type PointGroup } from 'signature_pad';
+import { type Dispatch, type RefObject, type SetStateAction, useEffect, useRef } from 'react';
+import { type InkPad, openInkPad } from './ink-pad.ts';
 import { BigButton, Trouble } from './pieces.tsx';
-import {
-  extentOf,
-  type Fit,
-  fitInto,
-  type Ink,
-  noInk,
-  type Size,
-  type Stroke,
-  toCanvas,
-  toFrame,
-} from './strokes.ts';
-
-const pen: Omit<PointGroup, 'points'> = {
-  penColor: '#1A2226',
-  dotSize: 2.5,
-  minWidth: 1.2,
-  maxWidth: 3,
-  velocityFilterWeight: 0.7,
-  compositeOperation: 'source-over',
-};
+import { cleared, type Ink, withoutLast, withStroke } from './strokes.ts';
 
 /** A box to sign in. The strokes are the truth and the canvas only shows them, so that they survive a turned phone. */
 export function SignatureField({
@@ -29,11 +10,11 @@ export function SignatureField({
   trouble,
 }: {
   ink: Ink;
-  onInk: (ink: Ink) => void;
+  onInk: Dispatch<SetStateAction<Ink>>;
   trouble: string | null;
 }) {
   const canvas = useRef<HTMLCanvasElement>(null);
-  usePad(canvas, ink, onInk);
+  useInkPad(canvas, ink, onInk);
   const count = ink.strokes.length;
   return (
     <div>
@@ -57,14 +38,10 @@ export function SignatureField({
           )}
         </div>
         <div className="flex gap-2 landscape:flex-col">
-          <BigButton
-            kind="quiet"
-            disabled={count === 0}
-            onClick={() => onInk({ ...ink, strokes: ink.strokes.slice(0, -1) })}
-          >
+          <BigButton kind="quiet" disabled={count === 0} onClick={() => onInk(withoutLast)}>
             Undo
           </BigButton>
-          <BigButton kind="quiet" disabled={count === 0} onClick={() => onInk(noInk)}>
+          <BigButton kind="quiet" disabled={count === 0} onClick={() => onInk(cleared)}>
             Clear
           </BigButton>
         </div>
@@ -76,80 +53,31 @@ export function SignatureField({
 
 const strokesInWords = (count: number) => (count === 1 ? '1 stroke drawn' : `${count} strokes drawn`);
 
-function usePad(
-  canvas: React.RefObject<HTMLCanvasElement | null>,
+/** Opens the pad on the canvas, gathers its strokes, and draws them anew when the box is turned or a stroke is taken back. */
+function useInkPad(
+  canvas: RefObject<HTMLCanvasElement | null>,
   ink: Ink,
-  onInk: (ink: Ink) => void,
+  onInk: Dispatch<SetStateAction<Ink>>,
 ): void {
-  const pad = useRef<SignaturePad | null>(null);
-  const size = useSizeOf(canvas);
-  const fit = useRef<Fit>({ scale: 1, dx: 0, dy: 0 });
-  const latest = useRef({ ink, onInk, size });
+  const pad = useRef<InkPad | null>(null);
+  const latest = useRef(ink);
   useEffect(() => {
-    latest.current = { ink, onInk, size };
-  });
-  useEffect(() => {
-    const box = canvas.current;
-    // Without a drawing surface the typed signature is the way.
-    if (!box?.getContext('2d')) return;
-    const created = new SignaturePad(box, { ...pen, minDistance: 2 });
-    const onStroke = () => {
-      const { ink: before, onInk: tell, size: canvasSize } = latest.current;
-      const points = created.toData().at(-1)?.points;
-      if (!points || !canvasSize) return;
-      const frame = before.frame ?? canvasSize;
-      const stroke = points.map(({ x, y, time }) => toFrame(fit.current, { x, y, time }));
-      const after = { frame, strokes: [...before.strokes, stroke] };
-      latest.current = { ...latest.current, ink: after };
-      tell(after);
-    };
-    created.addEventListener('endStroke', onStroke);
-    pad.current = created;
-    return () => {
-      created.off();
-      created.removeEventListener('endStroke', onStroke);
-      pad.current = null;
-    };
-  }, [canvas]);
-  useEffect(() => {
-    const box = canvas.current;
-    if (!box || !size || !pad.current) return;
-    const resized = fitCanvas(box, size);
-    if (!resized && pad.current.toData().length === ink.strokes.length) return;
-    // What is drawn keeps its place while the box keeps its size, even where a stroke went over the edge.
-    if (resized || ink.strokes.length === 0)
-      fit.current = fitInto(extentOf(ink.frame ?? size, ink.strokes), size);
-    const shown = fit.current;
-    pad.current.fromData(ink.strokes.map((stroke) => groupOf(stroke.map((point) => toCanvas(shown, point)))));
-  }, [canvas, ink, size]);
-}
-
-/** Gives the canvas as many dots as the screen has under it; false where it has them already. Setting the size wipes it. */
-function fitCanvas(box: HTMLCanvasElement, { width, height }: Size): boolean {
-  const ratio = Math.max(1, window.devicePixelRatio);
-  if (box.width === Math.round(width * ratio) && box.height === Math.round(height * ratio)) return false;
-  box.width = Math.round(width * ratio);
-  box.height = Math.round(height * ratio);
-  box.getContext('2d')?.scale(ratio, ratio);
-  return true;
-}
-
-const groupOf = (stroke: Stroke): PointGroup => ({
-  ...pen,
-  points: stroke.map((point) => ({ ...point, pressure: 0.5 })),
-});
-
-function useSizeOf(canvas: React.RefObject<HTMLCanvasElement | null>): Size | null {
-  const [size, setSize] = useState<Size | null>(null);
+    latest.current = ink;
+  }, [ink]);
   useEffect(() => {
     const box = canvas.current;
     if (!box) return;
-    const observer = new ResizeObserver(() => {
-      if (box.clientWidth > 0 && box.clientHeight > 0)
-        setSize({ width: box.clientWidth, height: box.clientHeight });
-    });
+    const opened = openInkPad(box, (stroke, size) => onInk((before) => withStroke(before, stroke, size)));
+    pad.current = opened;
+    const observer = new ResizeObserver(() => box.clientWidth > 0 && opened?.show(latest.current));
     observer.observe(box);
-    return () => observer.disconnect();
-  }, [canvas]);
-  return size;
+    return () => {
+      observer.disconnect();
+      opened?.close();
+      pad.current = null;
+    };
+  }, [canvas, onInk]);
+  useEffect(() => {
+    pad.current?.show(latest.current);
+  }, [ink.edits]);
 }

@@ -4,9 +4,25 @@ import { type DrawnSignature, inkOf, leastInk } from '#shared/signons/signature.
 export type InkPoint = { x: number; y: number; time: number };
 export type Stroke = InkPoint[];
 export type Size = { width: number; height: number };
-/** What has been drawn so far: strokes in the frame of the box as it was at the first touch. */
-export type Ink = { frame: Size | null; strokes: Stroke[] };
-export const noInk: Ink = { frame: null, strokes: [] };
+/**
+ * What has been drawn so far: strokes in the frame of the box as it was at the first touch. `edits` counts what changed other
+ * than by drawing.
+ */
+export type Ink = { frame: Size | null; strokes: Stroke[]; edits: number };
+export const noInk: Ink = { frame: null, strokes: [], edits: 0 };
+
+export const withStroke = (ink: Ink, stroke: Stroke, box: Size): Ink => ({
+  ...ink,
+  frame: ink.frame ?? box,
+  strokes: [...ink.strokes, stroke],
+});
+export const withoutLast = (ink: Ink): Ink => ({
+  ...ink,
+  strokes: ink.strokes.slice(0, -1),
+  edits: ink.edits + 1,
+});
+export const cleared = (ink: Ink): Ink => ({ ...noInk, edits: ink.edits + 1 });
+
 /** Uniform scale and shift from the frame to the canvas as it stands now. */
 export type Fit = { scale: number; dx: number; dy: number };
 

@@ -33,8 +33,10 @@ export function HandedRoundPage() {
       title="Hand the device round"
       lead={
         <>
-          <Link to={paths.site(siteId)}>{site.data?.name ?? 'The site'}</Link>. Each person taps their name,
-          reads, signs, and hands the device on.
+          <Link to={paths.site(siteId)} className="underline">
+            {site.data?.name ?? 'The site'}
+          </Link>
+          . Each person taps their name, reads, signs, and hands the device on.
         </>
       }
       actions={
@@ -101,7 +103,7 @@ function CrewList({ members, onOpen }: { members: CrewMember[]; onOpen: (member:
             {member.open.length === 0 ? (
               <span className="block text-lichen">Nothing left to sign</span>
             ) : (
-              <span className="block text-line">To sign: {member.open.join('; ')}</span>
+              <span className="block">To sign: {member.open.join('; ')}</span>
             )}
           </button>
         </li>

@@ -35,7 +35,7 @@ function Kept({ record }: { record: SignOnRecord }) {
       title={`Sign-on of ${person.name}`}
       lead={
         <>
-          <Link to={paths.revision(record.statementId, record.revision)}>
+          <Link to={paths.revision(record.statementId, record.revision)} className="underline">
             {record.statement}, revision {record.revision}
           </Link>
           , {record.site} <Badge tone={standings[standing].tone}>{standings[standing].words}</Badge>

@@ -3,6 +3,7 @@ import fc from 'fast-check';
 import { controlLevels, controlTier, type ControlLevel } from '#shared/library/block.ts';
 import {
   type CrewCard,
+  controlsShownFirst,
   crewCardsOf,
   fastestReading,
   readTooFast,
@@ -124,6 +125,12 @@ test('words on cards are counted over everything that is read, whatever the spac
   expect(wordsOnCards([cardOf([])])).toBe(7);
   expect(wordsOnCards([cardOf(['  eight \n nine ']), cardOf([])])).toBe(16);
   expect(wordsOnCards([])).toBe(0);
+});
+
+test('controls that a card shows only when asked are not held against somebody’s reading time', () => {
+  const many = Array.from({ length: 9 }, () => ({ text: 'two words', level: 'ppe', role: 'Worker' }));
+
+  expect(wordsOnCards([{ ...cardOf([]), controls: many }])).toBe(5 + controlsShownFirst * 2);
 });
 
 test('reading at the line is not too fast, one millisecond quicker is', () => {

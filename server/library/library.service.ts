@@ -1,5 +1,5 @@
 import { and, desc, eq } from 'drizzle-orm';
-import type { Block } from '#shared/library/block.ts';
+import { type Block, hazardCategoryNames } from '#shared/library/block.ts';
 import type { BlockSummary } from '#shared/library/library.api.ts';
 import { Refusal } from '#shared/kernel/refusal.ts';
 import type { Db } from '../platform/db.ts';
@@ -50,6 +50,12 @@ export function summaryOf(block: Block): BlockSummary {
     hazards: block.steps.flatMap((step) =>
       step.hazards.map(({ title }) => title.replace(/\{\{.*?\}\}/g, '…')),
     ),
+    words: block.steps
+      .flatMap((step) => [
+        step.title,
+        ...step.hazards.flatMap(({ category, causes }) => [hazardCategoryNames[category], causes]),
+      ])
+      .join(' '),
     steps: block.steps.length,
     fillIns: block.fillIns.length,
   };

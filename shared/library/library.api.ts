@@ -11,6 +11,8 @@ export const blockSummarySchema = z.object({
   tools: z.array(z.string()),
   highRisk: z.array(z.string()),
   hazards: z.array(z.string()),
+  /** Further words to be found by: kinds of hazard, and what the block says of causes. */
+  words: z.string(),
   steps: z.number().int(),
   fillIns: z.number().int(),
 });

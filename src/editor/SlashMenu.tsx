@@ -32,7 +32,13 @@ export function SlashMenu({ ref, items, query, command }: SlashMenuProps) {
       return true;
     },
   }));
-  if (items.length === 0) return null;
+  if (items.length === 0) {
+    return query === '' ? null : (
+      <p className="z-50 rounded border border-zinc bg-sheet px-3 py-2 text-ink-soft shadow-float">
+        Nothing of that name. Escape leaves the text.
+      </p>
+    );
+  }
   return (
     <ul
       role="listbox"

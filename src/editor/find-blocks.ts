@@ -16,7 +16,7 @@ function scoreOf(block: BlockSummary, words: string[]): number {
     [block.title, 8],
     [block.tools.join(' '), 4],
     [block.hazards.join(' '), 2],
-    [`${block.summary} ${stageNames[block.stage]}`, 1],
+    [`${block.summary} ${stageNames[block.stage]} ${block.words}`, 1],
   ];
   let total = 1;
   for (const word of words) {

@@ -81,7 +81,7 @@ export class Visitor {
         source,
       )
       .catch(async () => {
-        const shown = await this.page.evaluate(() => document.body.innerText.slice(0, 1500));
+        const shown = await this.page.evaluate(() => document.body.innerText.slice(-1800));
         throw new Error(`Waited in vain for "${source}" at ${this.page.url()}. The page says:\n${shown}`);
       });
   }

@@ -4,6 +4,7 @@ import type { Request } from 'express';
 import 'express-session';
 import { Refusal } from '#shared/kernel/refusal.ts';
 import type { Access } from '#shared/kernel/endpoint.ts';
+import { idSchema } from '#shared/kernel/ids.ts';
 import type { Role } from '#shared/kernel/roles.ts';
 import { sha256Hex } from '#shared/kernel/canonical.ts';
 import { accounts, memberships } from '../account/account.table.ts';
@@ -55,7 +56,7 @@ export const deviceCookie = 'tb_device';
 /** The phone behind a request and its person, or null where the phone is not known, was revoked, or its person left. */
 export async function deviceOf(db: Db, request: Request): Promise<DeviceActor | null> {
   const [deviceId = '', secret = ''] = cookieOf(request, deviceCookie).split('.');
-  if (!/^[0-9a-f-]{36}$/.test(deviceId) || secret === '') return null;
+  if (!idSchema.safeParse(deviceId).success || secret === '') return null;
   const [device] = await db
     .select({
       orgId: devices.orgId,
@@ -73,5 +74,6 @@ export async function deviceOf(db: Db, request: Request): Promise<DeviceActor | 
 
 function cookieOf(request: Request, name: string): string {
   const pair = (request.headers.cookie ?? '').split(/;\s*/).find((part) => part.startsWith(`${name}=`));
-  return pair ? decodeURIComponent(pair.slice(name.length + 1)) : '';
+  // Ours holds nothing that cookies escape; whatever does is not ours.
+  return pair ? pair.slice(name.length + 1) : '';
 }

@@ -125,10 +125,10 @@ export async function enrolDevice(
     .insert(devices)
     .values({ orgId: site.orgId, id: deviceId, personId, secretHash, userAgent, noticeVersion })
     .onConflictDoUpdate({
-      target: [devices.orgId, devices.id],
+      target: devices.id,
       // A resend gets a fresh secret; a phone that was revoked, or that is somebody else's, is not taken over.
       set: { secretHash, lastSeenAt: new Date() },
-      setWhere: sql`${devices.personId} = ${personId} and ${devices.revokedAt} is null`,
+      setWhere: sql`${devices.orgId} = ${site.orgId} and ${devices.personId} = ${personId} and ${devices.revokedAt} is null`,
     })
     .returning({ id: devices.id });
   if (!kept) throw new Refusal('conflict', 'This phone is tied to somebody else. Choose “Not me” first.');

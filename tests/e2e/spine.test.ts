@@ -259,10 +259,11 @@ test('a talk is held with three of the crew and stands in the register of talks'
   );
   await page.select('form select', site);
   await supervisor.fill('Place', 'Site office');
-  await supervisor.click('Save');
+  await supervisor.click('Save the talk');
   await supervisor.sees('Hand the device round');
   const talkPath = new URL(page.url()).pathname;
   await supervisor.click('Hand the device round', 'link');
+  await supervisor.sees('0 of 5 have signed the talk');
   for (const name of ['Imran Sheikh', 'Lena Okafor', 'Wes Thackeray']) {
     await clickText(supervisor, name);
     await signEverything(supervisor);

@@ -37,7 +37,17 @@ export async function signEverything(visitor: Visitor): Promise<void> {
     if (screen.canvas) await drawAndSign(visitor);
     else if (screen.answers) await answer(visitor);
     else
-      await press(visitor, ['Read and sign', 'Sign that you were there', 'Start', 'Next', 'Begin', 'Go on', 'Answer', 'To the', 'Sign']);
+      await press(visitor, [
+        'Read and sign',
+        'Sign that you were there',
+        'Start',
+        'Next',
+        'Begin',
+        'Go on',
+        'Answer',
+        'To the',
+        'Sign',
+      ]);
   }
   throw new Error(`The signing never ended. The page says:\n${(await visitor.text()).slice(0, 1500)}`);
 }

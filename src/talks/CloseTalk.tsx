@@ -2,7 +2,7 @@ import { useState } from 'react';
 import type { Talk } from '#shared/talks/talks.api.ts';
 import { wordsOf } from '../lib/query.ts';
 import { Button } from '../ui/Button.tsx';
-import { ConfirmDialog } from '../ui/Dialog.tsx';
+import { ConfirmDialog, Dialog } from '../ui/Dialog.tsx';
 import { Notice } from '../ui/Notice.tsx';
 import { useCloseTalk } from './talks.queries.ts';
 
@@ -19,13 +19,26 @@ export function CloseTalk({
   const [asking, setAsking] = useState(false);
   const close = useCloseTalk(talk.id);
   const { attendance, missing } = talk;
+  const stay = () => setAsking(false);
   return (
     <>
       <Button onClick={() => setAsking(true)}>Close the talk</Button>
+      <Dialog
+        title="Save first"
+        lead="You have written words that are not saved. A talk closes with what is saved."
+        open={asking && unsaved}
+        onClose={stay}
+      >
+        <div className="flex justify-end">
+          <Button kind="filled" onClick={stay}>
+            Back to the talk
+          </Button>
+        </div>
+      </Dialog>
       <ConfirmDialog
         title="Close this talk?"
         act="Close the talk"
-        open={asking}
+        open={asking && !unsaved}
         busy={close.isPending}
         lead={
           <>
@@ -34,20 +47,13 @@ export function CloseTalk({
             more.
           </>
         }
-        onClose={() => setAsking(false)}
-        onConfirm={() => {
-          if (!unsaved) close.mutate(lockVersion, { onSuccess: () => setAsking(false) });
-        }}
+        onClose={stay}
+        onConfirm={() => close.mutate(lockVersion, { onSuccess: stay })}
       >
-        {unsaved ? (
-          <Notice kind="stop">
-            You have written words that are not saved. Save them first, or they are not in it.
-          </Notice>
-        ) : null}
         {missing.length > 0 ? (
           <p>
-            {missing.length} of {attendance.length + missing.length} have not signed:{' '}
-            {missing.map(({ name }) => name).join(', ')}.
+            {missing.length} of {attendance.length + missing.length} {missing.length === 1 ? 'has' : 'have'}{' '}
+            not signed: {missing.map(({ name }) => name).join(', ')}.
           </p>
         ) : null}
         {talk.consultation ? null : (

@@ -3,6 +3,7 @@ import { parentPort, workerData } from 'node:worker_threads';
 import { PGlite } from '@electric-sql/pglite';
 import { PGLiteSocketServer } from '@electric-sql/pglite-socket';
 import { DurableNodeFS } from './durable-fs.ts';
+import { wholeQueries } from './whole-queries.ts';
 
 const { dataDir, socketPath, durable } = workerData as {
   dataDir: string;
@@ -24,7 +25,7 @@ const pglite = await PGlite.create({
   fs: new DurableNodeFS(dataDir),
   ...(startParams ? { startParams } : {}),
 });
-const server = new PGLiteSocketServer({ db: pglite, path: socketPath, maxConnections: 64 });
+const server = new PGLiteSocketServer({ db: wholeQueries(pglite), path: socketPath, maxConnections: 64 });
 await server.start();
 parentPort?.postMessage('ready');
 parentPort?.once('message', () => {

@@ -89,7 +89,7 @@ export async function startEmptyWorld(): Promise<World> {
     NODE_ENV: 'test',
     PORT: '0',
     TOEBOARD_DATA: dataDir,
-    LOG_LEVEL: 'silent',
+    LOG_LEVEL: process.env.LOG_LEVEL ?? 'silent',
     PATH: process.env.PATH,
   });
   const server = await startServer({

@@ -64,6 +64,9 @@ function problemOf({ code, message, fields }: Refusal): Problem {
   };
 }
 
+// Whoever reads may stop early: `figure --list | head`.
+process.stdout.on('error', () => process.exit(0));
+
 try {
   console.log(JSON.stringify(answer(process.argv.slice(2)), null, 2));
 } catch (error) {

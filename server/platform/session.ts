@@ -26,26 +26,31 @@ export function createSessions(pool: Pool, { sessionSecret }: Config): RequestHa
   });
 }
 
+/** A method of the session that calls back, as a promise. */
+function done(start: (callback: (error: unknown) => void) => void): Promise<void> {
+  return new Promise((resolve, reject) => {
+    start((error) =>
+      error
+        ? reject(
+            error instanceof Error ? error : new Error('The session could not be kept.', { cause: error }),
+          )
+        : resolve(),
+    );
+  });
+}
+
 /** Signs in under a new session id, so that an id planted before is worth nothing. */
 export async function renewSession(
   request: Request,
   content: { accountId: string; orgId: string },
 ): Promise<void> {
-  await new Promise<void>((resolve, reject) => {
-    request.session.regenerate((error: unknown) => (error ? reject(error) : resolve()));
-  });
+  await done((callback) => request.session.regenerate(callback));
   Object.assign(request.session, content);
   await saveSession(request);
 }
 
-export async function saveSession(request: Request): Promise<void> {
-  await new Promise<void>((resolve, reject) => {
-    request.session.save((error: unknown) => (error ? reject(error) : resolve()));
-  });
-}
+export const saveSession = (request: Request): Promise<void> =>
+  done((callback) => request.session.save(callback));
 
-export async function endSession(request: Request): Promise<void> {
-  await new Promise<void>((resolve, reject) => {
-    request.session.destroy((error: unknown) => (error ? reject(error) : resolve()));
-  });
-}
+export const endSession = (request: Request): Promise<void> =>
+  done((callback) => request.session.destroy(callback));

@@ -7,7 +7,7 @@ import { Dialog } from '../ui/Dialog.tsx';
 import { inputLook } from '../ui/Field.tsx';
 import { paths } from './paths.ts';
 import { useMayDo, useSession } from './session.queries.ts';
-import { placesOf } from './Shell.tsx';
+import { placesOf } from './places.ts';
 import { useSiteInHand } from './site-in-hand.ts';
 
 type Command = { name: string; kind: string; to: string };

@@ -1,6 +1,6 @@
 import { Navigate } from 'react-router-dom';
 import { useSession } from './session.queries.ts';
-import { firstPathOf } from './Shell.tsx';
+import { firstPathOf } from './places.ts';
 
 /** The role decides the first screen. */
 export function HomePage() {

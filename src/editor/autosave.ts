@@ -12,7 +12,7 @@ export type SaveState =
   /** No connection: kept on this device, tried again. */
   | { kind: 'offline' }
   /** Somebody else saved meanwhile; nothing is sent until a person has chosen. */
-  | { kind: 'conflict'; theirs: DraftConflict }
+  | { kind: 'conflict'; theirs: DraftConflict; mine: Omit<Draft, 'lockVersion'> }
   /** The server refuses what is written, in words; the next change is tried again. */
   | { kind: 'refused'; words: string };
 
@@ -85,13 +85,13 @@ export function createAutosave({
     } catch (error) {
       sending = false;
       waiting ??= content;
-      fail(error);
+      fail(error, waiting);
     }
   }
 
-  function fail(error: unknown): void {
+  function fail(error: unknown, mine: Omit<Draft, 'lockVersion'>): void {
     if (error instanceof Refusal && error.code === 'conflict' && 'document' in error.extra) {
-      return show({ kind: 'conflict', theirs: error.extra as DraftConflict });
+      return show({ kind: 'conflict', theirs: error.extra as DraftConflict, mine });
     }
     if (error instanceof Refusal && error.code !== 'offline' && error.code !== 'unavailable') {
       return show({ kind: 'refused', words: error.message });

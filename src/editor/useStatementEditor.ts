@@ -1,6 +1,6 @@
 import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { type Editor, useEditor } from '@tiptap/react';
-import { useRef, useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { toast } from 'sonner';
 import type { Matrix } from '#shared/risk/matrix.ts';
 import type { NodeJson } from '#shared/statements/document/json.ts';
@@ -42,13 +42,13 @@ type Options = {
 /** The TipTap editor of one statement, with the slash menu over pieces and library. */
 export function useStatementEditor({ matrix, editable, label, document, onChange }: Options): Editor | null {
   const client = useQueryClient();
-  const { data } = useQuery(blocksQuery);
-  const library = useRef(data?.blocks ?? []);
-  library.current = data?.blocks ?? [];
+  // Fetched here, so that the menu finds the library when it is opened.
+  useQuery(blocksQuery);
   const latest = useRef(onChange);
-  latest.current = onChange;
+  useEffect(() => {
+    latest.current = onChange;
+  });
 
-  // Made once: the menu reads the library through the reference when it is opened.
   const [slash] = useState<SlashSource>(() => ({
     items(query) {
       const own = pieces
@@ -59,17 +59,19 @@ export function useStatementEditor({ matrix, editable, label, document, onChange
           hint,
           run: (editor) => void apply(editor, edit),
         }));
-      const blocks = findBlocks(library.current, query).map((block): SlashItem => ({
-        name: block.title,
-        words: '',
-        hint: `Block: ${block.summary}`,
-        run: (editor) => {
-          client
-            .fetchQuery(blockQuery(block.id))
-            .then((whole) => apply(editor, insertBlock(whole)))
-            .catch((error: unknown) => toast(wordsOf(error)));
-        },
-      }));
+      const blocks = findBlocks(client.getQueryData(blocksQuery.queryKey)?.blocks ?? [], query).map(
+        (block): SlashItem => ({
+          name: block.title,
+          words: '',
+          hint: `Block: ${block.summary}`,
+          run: (editor) => {
+            client
+              .fetchQuery(blockQuery(block.id))
+              .then((whole) => apply(editor, insertBlock(whole)))
+              .catch((error: unknown) => toast(wordsOf(error)));
+          },
+        }),
+      );
       return [...own, ...blocks].slice(0, most);
     },
   }));

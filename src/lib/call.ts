@@ -8,11 +8,11 @@ export function addressOf(
   given: { params?: object | undefined; query?: object | undefined },
 ): string {
   let path: string = endpoint.path;
-  for (const [name, value] of Object.entries(given.params ?? {}) as [string, unknown][])
-    path = path.replace(`:${name}`, encodeURIComponent(String(value)));
+  for (const [name, value] of Object.entries(given.params ?? {}) as [string, string | number][])
+    path = path.replace(`:${name}`, encodeURIComponent(`${value}`));
   const search = new URLSearchParams();
   for (const [name, value] of Object.entries((given.query ?? {}) as Record<string, unknown>))
-    if (value !== undefined && value !== '') search.set(name, String(value));
+    if (value !== undefined && value !== '') search.set(name, `${value as string | number}`);
   return search.size > 0 ? `${path}?${search}` : path;
 }
 

@@ -39,7 +39,7 @@ export function useSendForm<S extends z.ZodType<unknown, FieldValues>>({
   const submit = form.handleSubmit(async (body) => {
     setTrouble(null);
     try {
-      await send(body as z.output<S>);
+      await send(body);
     } catch (error) {
       if (error instanceof Refusal) {
         for (const [path, message] of Object.entries(error.fields))
@@ -52,5 +52,5 @@ export function useSendForm<S extends z.ZodType<unknown, FieldValues>>({
     submit,
     trouble,
     sending: form.formState.isSubmitting,
-  }) as unknown as SendForm<Input>;
+  });
 }

@@ -1,5 +1,5 @@
 import { Printer, Send, Trash2 } from 'lucide-react';
-import { useCallback, useRef, useState } from 'react';
+import { useCallback, useEffect, useRef, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import { toast } from 'sonner';
 import type { NodeJson } from '#shared/statements/document/json.ts';
@@ -40,9 +40,14 @@ export function DraftView({ statement }: { statement: Statement }) {
     [change],
   );
 
+  // What came back from this device is sent without a change of its own.
+  useEffect(() => {
+    if (restored) change(current.current);
+  }, [restored, change]);
+
   function takeTheirs() {
     if (state.kind !== 'conflict') return;
-    putAside(id, current.current);
+    putAside(id, state.mine);
     const theirs = { title: state.theirs.title, document: state.theirs.document };
     autosave.current?.takeTheirs();
     current.current = theirs;
@@ -86,11 +91,10 @@ export function DraftView({ statement }: { statement: Statement }) {
           heading={<SaveStatus state={state} timeZone={timeZone} />}
         />
       </div>
-      {restored ? <SaveRestored save={() => change(current.current)} /> : null}
       {state.kind === 'conflict' ? (
         <ConflictDialog
           theirs={state.theirs}
-          mine={current.current}
+          mine={state.mine}
           timeZone={timeZone}
           onKeepMine={() => void autosave.current?.keepMine()}
           onTakeTheirs={takeTheirs}
@@ -98,16 +102,6 @@ export function DraftView({ statement }: { statement: Statement }) {
       ) : null}
     </Page>
   );
-}
-
-/** Sends a restored draft once, without a change of its own. */
-function SaveRestored({ save }: { save: () => void }) {
-  const sent = useRef(false);
-  if (!sent.current) {
-    sent.current = true;
-    queueMicrotask(save);
-  }
-  return null;
 }
 
 /** Kept text that was written over an older version than the stored one: it can't be laid over it blindly. */

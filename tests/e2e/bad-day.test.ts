@@ -120,7 +120,7 @@ test('a wrong day code is told in words, and too many of them have to wait', asy
   await writer.page.locator('tbody a').click();
   const address = await writer.page.waitForSelector('a[href*="/s/"]');
   const phone = await Visitor.phone(chromium.browser, { width: 320, height: 568 });
-  await phone.go((await address?.evaluate((link) => (link as HTMLAnchorElement).href)) ?? '');
+  await phone.go((await address?.evaluate((link) => link.href)) ?? '');
   expect(await phone.overflows()).toBe(false);
   await phone.click('I have read this, go on');
   await phone.page.type('#name', 'Asha');

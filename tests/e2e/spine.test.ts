@@ -55,8 +55,7 @@ test('a supervisor signs in and starts a statement from a starter', async () => 
   async function optionOf(label: string, name: string): Promise<string> {
     return page.$eval(
       `select[name="${name}"]`,
-      (select, wanted) =>
-        [...(select as HTMLSelectElement).options].find(({ text }) => text === wanted)?.value ?? '',
+      (select, wanted) => [...select.options].find(({ text }) => text === wanted)?.value ?? '',
       label,
     );
   }
@@ -190,7 +189,7 @@ test('a worker signs on their own phone with the day code', async () => {
   await supervisor.go(`${app.url}/sites`);
   await supervisor.click('Old Quarry Road, stage 2', 'link');
   await supervisor.sees('Code for');
-  const address = await supervisor.page.$eval('a[href*="/s/"]', (link) => (link as HTMLAnchorElement).href);
+  const address = await supervisor.page.$eval('a[href*="/s/"]', (link) => link.href);
   const code = /(?:Code for [^\n]*\n+)(\d{4})/.exec(await supervisor.text())?.[1] ?? '';
   const phone = await Visitor.phone(chromium.browser);
   await phone.go(address);

@@ -10,7 +10,7 @@ class Observer {
   unobserve() {}
   disconnect() {}
 }
-globalThis.ResizeObserver = Observer as unknown as typeof ResizeObserver;
+globalThis.ResizeObserver = Observer;
 Range.prototype.getClientRects = () => [] as unknown as DOMRectList;
 Range.prototype.getBoundingClientRect = () => new DOMRect();
 document.elementFromPoint = () => null;

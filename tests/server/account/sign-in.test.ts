@@ -28,10 +28,16 @@ test('everybody of the demo signs in at the same moment, and each gets their own
 });
 
 test('an unknown address and a wrong password are refused in the same words', async () => {
-  const wrong = world.client().call(api.signIn, { body: { ...signInOf('worker'), password: 'not this one at all' } });
-  const unknown = world.client().call(api.signIn, { body: { email: 'nobody@nowhere.example', password: 'not this one at all' } });
+  const wrong = world
+    .client()
+    .call(api.signIn, { body: { ...signInOf('worker'), password: 'not this one at all' } });
+  const unknown = world
+    .client()
+    .call(api.signIn, { body: { email: 'nobody@nowhere.example', password: 'not this one at all' } });
 
-  const messages = await Promise.all([wrong, unknown].map((attempt) => attempt.then(String, (error: Error) => error.message)));
+  const messages = await Promise.all(
+    [wrong, unknown].map((attempt) => attempt.then(String, (error: Error) => error.message)),
+  );
   expect(new Set(messages)).toEqual(new Set(['E-mail or password is not right.']));
 });
 
@@ -51,7 +57,10 @@ test('signing in gives a new session id', async () => {
 test('after too many tries with one address even the right password has to wait, and the answer says how long', async () => {
   const email = 'throttled@nowhere.example';
   for (let attempt = 0; attempt < 8; attempt += 1)
-    await world.client().call(api.signIn, { body: { email, password: 'wrong' } }).catch(() => undefined);
+    await world
+      .client()
+      .call(api.signIn, { body: { email, password: 'wrong' } })
+      .catch(() => undefined);
 
   const response = await world.client().send(api.signIn, { body: { email, password: 'wrong' } });
 
@@ -79,22 +88,33 @@ test('a forgotten password is set by a mailed link, once, and every session ends
   const visitor = world.client();
   await visitor.call(api.askPasswordReset, { body: { email: signInOf('administrator').email } });
 
-  const mail = await waitFor(async () => (await visitor.call(api.readOutbox, {})).mails.find(({ to }) => to.startsWith('ada')));
+  const mail = await waitFor(async () =>
+    (await visitor.call(api.readOutbox, {})).mails.find(({ to }) => to.startsWith('ada')),
+  );
   const body = { token: linkIn(mail.text), password: 'another sentence to keep' };
   await visitor.call(api.resetPassword, { body });
 
   await expect(open.call(api.getSession, {})).rejects.toMatchObject({ code: 'signedOut' });
   await expect(visitor.call(api.resetPassword, { body })).rejects.toMatchObject({ code: 'invalid' });
-  const session = await visitor.call(api.signIn, { body: { email: signInOf('administrator').email, password: body.password } });
+  const session = await visitor.call(api.signIn, {
+    body: { email: signInOf('administrator').email, password: body.password },
+  });
   expect(session.role).toBe('administrator');
-  await visitor.call(api.changePassword, { body: { current: body.password, password: signInOf('administrator').password } });
+  await visitor.call(api.changePassword, {
+    body: { current: body.password, password: signInOf('administrator').password },
+  });
 });
 
 test('an invited member sets a password by mail and joins; the last administrator stays one', async () => {
   const administrator = await world.as('administrator');
   const session = await administrator.call(api.getSession, {});
   const id = '01940000-0000-7000-8000-00000000aaaa';
-  const invitation = { email: 'New.Hand@ridgeline.example', name: 'New Hand', role: 'supervisor' as const, personId: null };
+  const invitation = {
+    email: 'New.Hand@ridgeline.example',
+    name: 'New Hand',
+    role: 'supervisor' as const,
+    personId: null,
+  };
 
   const member = await administrator.call(api.inviteMember, { params: { id }, body: invitation });
   const again = await administrator.call(api.inviteMember, { params: { id }, body: invitation });
@@ -108,10 +128,18 @@ test('an invited member sets a password by mail and joins; the last administrato
   });
   expect(mails).toHaveLength(1);
   const visitor = world.client();
-  await visitor.call(api.resetPassword, { body: { token: linkIn(mails[0]?.text ?? ''), password: 'a sentence of my own' } });
-  expect((await visitor.call(api.signIn, { body: { email: invitation.email, password: 'a sentence of my own' } })).role).toBe('supervisor');
+  await visitor.call(api.resetPassword, {
+    body: { token: linkIn(mails[0]?.text ?? ''), password: 'a sentence of my own' },
+  });
+  expect(
+    (await visitor.call(api.signIn, { body: { email: invitation.email, password: 'a sentence of my own' } }))
+      .role,
+  ).toBe('supervisor');
   await expect(
-    administrator.call(api.changeMemberRole, { params: { id: session.account.id }, body: { role: 'worker' } }),
+    administrator.call(api.changeMemberRole, {
+      params: { id: session.account.id },
+      body: { role: 'worker' },
+    }),
   ).rejects.toMatchObject({ code: 'conflict' });
   await administrator.call(api.removeMember, { params: { id } });
   await expect(visitor.call(api.getSession, {})).rejects.toMatchObject({ code: 'signedOut' });

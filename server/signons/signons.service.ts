@@ -167,6 +167,12 @@ export async function attend(
     payload: attendanceRecord(row),
     at: now,
   });
-  await db.insert(attendances).values({ ...row, ledgerSequence: entry.sequence });
+  const [kept] = await db
+    .insert(attendances)
+    .values({ ...row, ledgerSequence: entry.sequence })
+    .onConflictDoNothing()
+    .returning({ id: attendances.id });
+  if (!kept)
+    throw new Refusal('conflict', 'This attendance was received already, for somebody or something else.');
   return { id, receivedAt: now.toISOString() };
 }

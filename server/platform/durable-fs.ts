@@ -1,4 +1,5 @@
 import fs from 'node:fs';
+import { PGlite } from '@electric-sql/pglite';
 import { NodeFS } from '@electric-sql/pglite/nodefs';
 
 type Module = { NODEFS?: Operations; FS: { filesystems: { NODEFS: Operations } } };
@@ -22,3 +23,9 @@ export class DurableNodeFS extends NodeFS {
     return ready;
   }
 }
+
+/** Start parameters that go with it: PGlite's own begin with `-F`, which switches fsync off. */
+export const durableStartParams = (): string[] => [
+  ...PGlite.defaultStartParams.filter((parameter) => parameter !== '-F'),
+  ...['-c', 'wal_sync_method=fsync', '-c', 'max_wal_size=256MB'],
+];

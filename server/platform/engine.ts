@@ -32,7 +32,9 @@ export async function openEngine({
     worker.once('exit', (code) => reject(new Error(`The database engine ended with ${code}.`)));
   });
   return {
-    pool: { host: folder, user: 'postgres', database: 'postgres' },
+    // One connection. A query with values travels as several messages, the engine has one backend, and the socket server lets
+    // another connection's messages in between: with two connections one query could run with the other's values. One is also quicker.
+    pool: { host: folder, user: 'postgres', database: 'postgres', max: 1 },
     async close() {
       const closed = new Promise<void>((resolve) => worker.once('exit', () => resolve()));
       worker.postMessage('close');

@@ -5,6 +5,7 @@ import { Link, Navigate, NavLink, Outlet, useLocation } from 'react-router-dom';
 import type { Role } from '#shared/kernel/roles.ts';
 import { Loaded } from '../ui/Loaded.tsx';
 import { Mark } from '../ui/Mark.tsx';
+import { SendKept } from '../signons/SendKept.tsx';
 import { Toaster } from '../ui/Toaster.tsx';
 import { AccountMenu } from './AccountMenu.tsx';
 import { Board } from './Board.tsx';
@@ -45,6 +46,7 @@ export function Shell() {
               <TabBar role={data.role} />
             </div>
             <SignInAgain />
+            <SendKept />
             <CommandList />
             <Toaster />
           </div>

@@ -1,97 +1,133 @@
+import fs from 'node:fs';
 import { cp, mkdtemp, rm } from 'node:fs/promises';
-import { connect } from 'node:net';
+import { spawn } from 'node:child_process';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { Pool } from 'pg';
-import { afterAll, beforeAll, expect, inject, test } from 'vitest';
-import { type Engine, openEngine } from '../../../server/platform/engine.ts';
+import { PGlite } from '@electric-sql/pglite';
+import { afterEach, expect, inject, test, vi } from 'vitest';
+import { DataFolderInUse, lockDataFolder } from '../../../server/platform/data-lock.ts';
+import { openDatabase } from '../../../server/platform/db.ts';
+import { durableStartParams, DurableNodeFS } from '../../../server/platform/durable-fs.ts';
+import { openEngine } from '../../../server/platform/engine.ts';
 
-let dataDir: string;
-let engine: Engine;
-let pool: Pool;
-
-beforeAll(async () => {
-  dataDir = await mkdtemp(join(tmpdir(), 'tb-engine-'));
-  await cp(inject('engineTemplate'), dataDir, { recursive: true });
-  engine = await openEngine({ dataDir, durable: false });
-  pool = new Pool({ ...engine.pool, max: 10, query_timeout: 10_000 });
+const folders: string[] = [];
+afterEach(async () => {
+  for (const folder of folders.splice(0)) await rm(folder, { recursive: true, force: true });
 });
-afterAll(async () => {
-  await pool.end();
+
+async function folderFrom(template?: string): Promise<string> {
+  const folder = await mkdtemp(join(tmpdir(), 'tb-engine-'));
+  folders.push(folder);
+  if (template) await cp(template, folder, { recursive: true });
+  return folder;
+}
+
+test('every commit of the embedded engine reaches the disk: fsync is called for each', async () => {
+  const folder = await folderFrom(inject('engineTemplate'));
+  const engine = await PGlite.create({ fs: new DurableNodeFS(join(folder, 'pglite')), startParams: durableStartParams() });
+  const fsync = vi.spyOn(fs, 'fsyncSync');
+
+  for (let index = 0; index < 20; index += 1) await engine.query('insert into throttles (key, points) values ($1, 1)', [`k${index}`]);
+
+  expect(fsync.mock.calls.length).toBeGreaterThanOrEqual(20);
+  fsync.mockRestore();
   await engine.close();
-  await rm(dataDir, { recursive: true, force: true });
 });
 
-/** A query outside a transaction whose answer only its own text and values can give. */
-async function ask(at: number): Promise<string> {
-  const { rows } = await pool.query<{ answer: string }>(
-    `select 'query ${at % 7}, value ' || $1::text as answer`,
-    [String(at)],
-  );
-  return rows[0]?.answer ?? '';
-}
+test('many requests at the same moment each get their own answer, and none another’s', async () => {
+  const folder = await folderFrom(inject('engineTemplate'));
+  const engine = await openEngine({ dataDir: folder, durable: false });
+  const database = openDatabase(engine.pool);
+  const asks = Array.from({ length: 400 }, (_, index) => index);
 
-/** Holds a transaction open for a while, so that the queries of the other connections pile up behind it. */
-async function transact(at: number): Promise<string> {
-  const client = await pool.connect();
-  try {
-    await client.query('begin');
-    const { rows } = await client.query<{ answer: string }>(`select 'inside ' || $1::text as answer`, [at]);
-    await new Promise((resolve) => setTimeout(resolve, 2));
-    await client.query('commit');
-    return rows[0]?.answer ?? '';
-  } finally {
-    client.release();
+  const answers = await Promise.all(
+    asks.map(async (index) => {
+      const text = [
+        'select $1::text as a',
+        'select $1::text || $2::text as a, 1 as b',
+        'select length($1::text) as n, $1::text as a',
+        'select $1::text as a where $2::text = $1::text',
+      ][index % 4];
+      const values = index % 2 === 1 ? [`v${index}`, index % 4 === 1 ? '!' : `v${index}`] : [`v${index}`];
+      const { rows } = await database.pool.query<{ a: string }>(text ?? '', values);
+      return rows[0]?.a;
+    }),
+  );
+
+  expect(answers).toEqual(asks.map((index) => (index % 4 === 1 ? `v${index}!` : `v${index}`)));
+  await database.close();
+  await engine.close();
+});
+
+test('a query beside an open transaction fails in words instead of waiting for ever', async () => {
+  const folder = await folderFrom(inject('engineTemplate'));
+  const engine = await openEngine({ dataDir: folder, durable: false });
+  const database = openDatabase({ ...engine.pool, connectionTimeoutMillis: 500 });
+
+  const slip = database.db.transaction(async () => {
+    await database.pool.query('select 1');
+  });
+
+  await expect(slip).rejects.toThrow(/timeout/i);
+  expect((await database.pool.query('select 1 as one')).rows).toEqual([{ one: 1 }]);
+  await database.close();
+  await engine.close();
+});
+
+test('a transaction that throws leaves nothing behind', async () => {
+  const folder = await folderFrom(inject('engineTemplate'));
+  const engine = await openEngine({ dataDir: folder, durable: false });
+  const database = openDatabase(engine.pool);
+
+  const failing = database.db.transaction(async (tx) => {
+    await tx.execute(`insert into throttles (key, points) values ('gone', 1)`);
+    throw new Error('thrown away');
+  });
+
+  await expect(failing).rejects.toThrow('thrown away');
+  expect((await database.pool.query(`select * from throttles where key = 'gone'`)).rows).toEqual([]);
+  await database.close();
+  await engine.close();
+});
+
+test('a second holder of a data folder is refused at once, in words that name the first', async () => {
+  const folder = await folderFrom();
+  const lock = await lockDataFolder(folder);
+  const started = Date.now();
+
+  const second = lockDataFolder(folder);
+
+  await expect(second).rejects.toBeInstanceOf(DataFolderInUse);
+  await expect(second).rejects.toThrow(`process ${process.pid}`);
+  expect(Date.now() - started).toBeLessThan(1000);
+  lock.release();
+});
+
+test('the lock is free at once after its holder is killed', async () => {
+  const folder = await folderFrom();
+  const module = new URL('../../../server/platform/data-lock.ts', import.meta.url).href;
+  const code = `import(${JSON.stringify(module)}).then(async ({ lockDataFolder }) => { await lockDataFolder(${JSON.stringify(folder)}); console.log('held'); setInterval(() => {}, 1000); })`;
+  const holder = spawn(process.execPath, ['--import', 'tsx', '--input-type=module', '-e', code], { stdio: ['ignore', 'pipe', 'inherit'] });
+  await new Promise<void>((resolve) => holder.stdout.once('data', () => resolve()));
+  await expect(lockDataFolder(folder)).rejects.toBeInstanceOf(DataFolderInUse);
+
+  const gone = new Promise<void>((resolve) => holder.once('exit', () => resolve()));
+  holder.kill('SIGKILL');
+  await gone;
+
+  const lock = await retryFor(500, () => lockDataFolder(folder));
+  lock.release();
+});
+
+/** The kernel needs a moment to close the killed process's pipes. */
+async function retryFor<T>(ms: number, attempt: () => Promise<T>): Promise<T> {
+  const end = Date.now() + ms;
+  for (;;) {
+    try {
+      return await attempt();
+    } catch (error) {
+      if (Date.now() > end) throw error;
+      await new Promise((resolve) => setTimeout(resolve, 20));
+    }
   }
 }
-
-test('queries at the same moment, in transactions and outside, each get the answer to their own', async () => {
-  const numbers = Array.from({ length: 600 }, (_, at) => at);
-
-  const answers = await Promise.allSettled(numbers.map((at) => (at % 4 === 0 ? transact(at) : ask(at))));
-
-  expect(answers).toEqual(
-    numbers.map((at) => ({
-      status: 'fulfilled',
-      value: at % 4 === 0 ? `inside ${at}` : `query ${at % 7}, value ${at}`,
-    })),
-  );
-});
-
-test('queries that fail among others spoil none of them', async () => {
-  const numbers = Array.from({ length: 600 }, (_, at) => at);
-  const fail = (at: number) => pool.query('select 1 / $1::int', [at - at]).then(String);
-
-  const answers = await Promise.allSettled(
-    numbers.map((at) => (at % 3 === 0 ? fail(at) : at % 3 === 1 ? transact(at) : ask(at))),
-  );
-
-  for (const [at, answer] of answers.entries()) {
-    if (at % 3 === 0)
-      expect(answer).toMatchObject({ status: 'rejected', reason: { message: 'division by zero' } });
-    else
-      expect(answer).toEqual({
-        status: 'fulfilled',
-        value: at % 3 === 1 ? `inside ${at}` : `query ${at % 7}, value ${at}`,
-      });
-  }
-});
-
-test('a client that breaks off in the middle of a query holds nobody up', async () => {
-  const socket = connect(join(engine.pool.host ?? '', '.s.PGSQL.5432'));
-  const startup = Buffer.from('\0\0\0\0\0\x03\0\0user\0postgres\0database\0postgres\0\0', 'latin1');
-  startup.writeInt32BE(startup.length, 0);
-  socket.write(startup);
-  await new Promise((resolve) => socket.once('data', resolve));
-  // A Parse of a statement that doesn't exist, and no Sync after it: the engine would skip everything up to one.
-  const parse = Buffer.from('P\0\0\0\0\0select nonsense from nowhere\0\0\0', 'latin1');
-  parse.writeInt32BE(parse.length - 1, 1);
-  socket.write(parse);
-  await new Promise((resolve) => setTimeout(resolve, 100));
-  const waiting = ask(1);
-
-  socket.destroy();
-
-  expect(await waiting).toBe('query 1, value 1');
-  expect(await ask(2)).toBe('query 2, value 2');
-});

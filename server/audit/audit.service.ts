@@ -1,10 +1,11 @@
-import { and, asc, eq, gte, isNull } from 'drizzle-orm';
+import { and, asc, eq, gte, isNull, max } from 'drizzle-orm';
 import type { Exception } from '#shared/audit/audit.api.ts';
 import { type AuditFacts, exceptionsOf } from '#shared/audit/exceptions.ts';
 import { workDateOf } from '#shared/kernel/work-date.ts';
 import { accounts, memberships, organisations } from '../account/account.table.ts';
 import { ledgerHeads } from '../ledger/ledger.table.ts';
 import type { Db } from '../platform/db.ts';
+import { signOns } from '../signons/signons.table.ts';
 import { latestSignOns, statementsInForce } from '../signons/standing.service.ts';
 import { boardOf } from '../sites/board.service.ts';
 import { listSites, todayAt } from '../sites/sites.service.ts';
@@ -43,6 +44,7 @@ async function statementFacts(
 ): Promise<AuditFacts['statements']> {
   const inForce = await statementsInForce(db, orgId, { siteId });
   const signed = await latestSignOns(db, orgId, { siteId });
+  const longest = await longestReadings(db, orgId);
   const facts = [];
   for (const statement of inForce) {
     const crew = await crewOf(db, orgId, statement.siteId);
@@ -63,11 +65,24 @@ async function statementFacts(
           personId,
           revision: revisionNumber,
           signedAt: signedAt.toISOString(),
-          readingMs,
+          readingMs: longest.get(`${statement.statementId} ${personId} ${revisionNumber}`) ?? readingMs,
         })),
     });
   }
   return facts;
+}
+
+/** Whoever read too fast mends it by reading again and signing: the longest reading counts, by statement, person and revision. */
+async function longestReadings(db: Db, orgId: string): Promise<Map<string, number>> {
+  const { statementId, personId, revisionNumber, readingMs } = signOns;
+  const rows = await db
+    .select({ statementId, personId, revisionNumber, readingMs: max(readingMs) })
+    .from(signOns)
+    .where(eq(signOns.orgId, orgId))
+    .groupBy(statementId, personId, revisionNumber);
+  return new Map(
+    rows.map((row) => [`${row.statementId} ${row.personId} ${row.revisionNumber}`, row.readingMs ?? 0]),
+  );
 }
 
 async function talkFacts(

@@ -24,10 +24,14 @@ async function folderFrom(template?: string): Promise<string> {
 
 test('every commit of the embedded engine reaches the disk: fsync is called for each', async () => {
   const folder = await folderFrom(inject('engineTemplate'));
-  const engine = await PGlite.create({ fs: new DurableNodeFS(join(folder, 'pglite')), startParams: durableStartParams() });
+  const engine = await PGlite.create({
+    fs: new DurableNodeFS(join(folder, 'pglite')),
+    startParams: durableStartParams(),
+  });
   const fsync = vi.spyOn(fs, 'fsyncSync');
 
-  for (let index = 0; index < 20; index += 1) await engine.query('insert into throttles (key, points) values ($1, 1)', [`k${index}`]);
+  for (let index = 0; index < 20; index += 1)
+    await engine.query('insert into throttles (key, points) values ($1, 1)', [`k${index}`]);
 
   expect(fsync.mock.calls.length).toBeGreaterThanOrEqual(20);
   fsync.mockRestore();
@@ -107,7 +111,9 @@ test('the lock is free at once after its holder is killed', async () => {
   const folder = await folderFrom();
   const module = new URL('../../../server/platform/data-lock.ts', import.meta.url).href;
   const code = `import(${JSON.stringify(module)}).then(async ({ lockDataFolder }) => { await lockDataFolder(${JSON.stringify(folder)}); console.log('held'); setInterval(() => {}, 1000); })`;
-  const holder = spawn(process.execPath, ['--import', 'tsx', '--input-type=module', '-e', code], { stdio: ['ignore', 'pipe', 'inherit'] });
+  const holder = spawn(process.execPath, ['--import', 'tsx', '--input-type=module', '-e', code], {
+    stdio: ['ignore', 'pipe', 'inherit'],
+  });
   await new Promise<void>((resolve) => holder.stdout.once('data', () => resolve()));
   await expect(lockDataFolder(folder)).rejects.toBeInstanceOf(DataFolderInUse);
 

@@ -85,7 +85,7 @@ afterEach(() => {
 
 async function open(role: Role = 'supervisor') {
   const client = new QueryClient({ defaultOptions: { queries: { retry: false } } });
-  client.setQueryData(sessionQuery.queryKey, {
+  const session: Session = {
     account: { id: newId(), email: 'lou@southern.example', name: 'Lou Karsten' },
     role,
     personId: null,
@@ -99,7 +99,8 @@ async function open(role: Role = 'supervisor') {
     },
     memberships: [],
     outbox: false,
-  });
+  };
+  client.setQueryData(sessionQuery.queryKey, session);
   const router = createMemoryRouter([{ path: '/talks/:id', Component: TalkPage }], {
     initialEntries: [`/talks/${talk.id}`],
   });

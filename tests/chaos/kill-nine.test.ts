@@ -102,11 +102,15 @@ async function signUntilKilled(app: RunningApp, prepared: Prepared, afterMs: num
 
 async function missingOf(officer: Client, ids: string[]): Promise<string[]> {
   const missing: string[] = [];
-  for (const id of ids) {
-    const response = await officer.send(getSignOn, { params: { id } });
-    if (response.status !== 200) missing.push(id);
-    await response.arrayBuffer();
-  }
+  const left = [...ids];
+  const look = async () => {
+    for (let id = left.pop(); id; id = left.pop()) {
+      const response = await officer.send(getSignOn, { params: { id } });
+      if (response.status !== 200) missing.push(id);
+      await response.arrayBuffer();
+    }
+  };
+  await Promise.all(Array.from({ length: inFlight }, look));
   return missing;
 }
 

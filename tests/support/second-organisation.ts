@@ -1,11 +1,13 @@
 import { eq } from 'drizzle-orm';
 import { newId } from '#shared/kernel/ids.ts';
-import { organisations } from '../../server/account/account.table.ts';
+import { signIn } from '#shared/account/account.api.ts';
+import { accounts, memberships, organisations } from '../../server/account/account.table.ts';
+import { hashPassword } from '../../server/account/password.ts';
 import { saveEmployer, savePerson } from '../../server/people/people.service.ts';
 import { dayCodeFor, putOnCrew, saveSite, todayAt } from '../../server/sites/sites.service.ts';
 import { sites } from '../../server/sites/sites.table.ts';
 import type { SignAccess } from './phones.ts';
-import type { DemoWorld } from './server.ts';
+import type { Client, DemoWorld } from './server.ts';
 
 export type SecondOrganisation = {
   orgId: string;
@@ -42,4 +44,21 @@ export async function addSecondOrganisation({ db, seeded }: DemoWorld): Promise<
   if (!site) throw new Error('The second site was not kept.');
   const dayCode = await dayCodeFor(db, orgId, siteId, todayAt(site));
   return { orgId, siteId, employerId, personId, access: { token: site.signToken, dayCode } };
+}
+
+/** Somebody with every right of a safety officer in another organisation, signed in. */
+export async function strangerIn(world: DemoWorld): Promise<Client> {
+  const { orgId } = await addSecondOrganisation(world);
+  const accountId = newId();
+  const email = 'stranger@other.example';
+  const password = 'a sentence of a stranger';
+  await world.db
+    .insert(accounts)
+    .values({ id: accountId, email, name: 'A Stranger', passwordHash: await hashPassword(password) });
+  await world.db
+    .insert(memberships)
+    .values({ orgId, accountId, role: 'safetyOfficer', joinedAt: new Date() });
+  const client = world.client();
+  await client.call(signIn, { body: { email, password } });
+  return client;
 }

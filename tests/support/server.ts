@@ -1,7 +1,9 @@
+import { randomUUID } from 'node:crypto';
 import { cp, mkdtemp, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { Client as PgClient } from 'pg';
 import { inject } from 'vitest';
 import type { NodePgDatabase } from 'drizzle-orm/node-postgres';
 import { type CallOf, type EndpointSpec, isFileReply, type ReplyOf } from '#shared/kernel/endpoint.ts';
@@ -84,12 +86,15 @@ export type World = {
 /** A whole server in this process on an empty, migrated database of its own. Close it at the end of the file. */
 export async function startEmptyWorld(): Promise<World> {
   const dataDir = await mkdtemp(join(tmpdir(), 'tb-world-'));
-  await cp(inject('engineTemplate'), dataDir, { recursive: true });
+  const postgres = process.env.TEST_POSTGRES;
+  const databaseUrl = postgres ? await createPostgresDatabase(postgres) : undefined;
+  if (!databaseUrl) await cp(inject('engineTemplate'), dataDir, { recursive: true });
   const config = readConfig({
     NODE_ENV: 'test',
     PORT: '0',
     TOEBOARD_DATA: dataDir,
-    LOG_LEVEL: process.env.LOG_LEVEL ?? 'silent',
+    DATABASE_URL: databaseUrl,
+    LOG_LEVEL: 'silent',
     PATH: process.env.PATH,
   });
   const server = await startServer({
@@ -110,6 +115,18 @@ export async function startEmptyWorld(): Promise<World> {
       await rm(dataDir, { recursive: true, force: true });
     },
   };
+}
+
+/** A database of its own on the PostgreSQL server at this address; the server is thrown away with all of them. */
+async function createPostgresDatabase(address: string): Promise<string> {
+  const name = `world_${randomUUID().replaceAll('-', '')}`;
+  const client = new PgClient({ connectionString: address });
+  await client.connect();
+  await client.query(`create database ${name}`);
+  await client.end();
+  const url = new URL(address);
+  url.pathname = `/${name}`;
+  return url.href;
 }
 
 export type DemoWorld = World & {

@@ -16,7 +16,11 @@ const problemOf = async (response: Response) => {
 test('health says version, database, engine and whether PDFs can be made', async () => {
   const health = await world.client().call(getHealth, {});
 
-  expect(health).toMatchObject({ version: 'test', database: 'well', engine: 'embedded' });
+  expect(health).toMatchObject({
+    version: 'test',
+    database: 'well',
+    engine: process.env.TEST_POSTGRES ? 'postgresql' : 'embedded',
+  });
   expect(typeof health.pdf).toBe('boolean');
 });
 

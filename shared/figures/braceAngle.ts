@@ -1,19 +1,19 @@
 import { z } from 'zod';
 import { defineFigure, refuseInput } from './figure.ts';
 import { outcome, outcomeOrNone, quantity, warnings } from './inputs.ts';
+import { slip } from './numerics.ts';
 import { about, atLeast } from './words.ts';
 
 const angle = (label: string) => quantity(label, '°', { least: 1, most: 89 });
 const degrees = (radians: number) => (radians * 180) / Math.PI;
-const slack = 1e-9;
 
 /** The number of truss spaces whose brace comes nearest to the best angle without being flatter than the least; 0 where none does. */
 function nearestSpaces(slopeLengthM: number, trussSpacingM: number, minDeg: number, bestDeg: number): number {
   const angleOf = (spaces: number) => degrees(Math.atan(slopeLengthM / (spaces * trussSpacingM)));
   const ideal = slopeLengthM / (trussSpacingM * Math.tan((bestDeg * Math.PI) / 180));
-  const candidates = [Math.floor(ideal + slack), Math.ceil(ideal - slack)]
+  const candidates = [Math.floor(ideal + slip), Math.ceil(ideal - slip)]
     .map((spaces) => Math.max(1, spaces))
-    .filter((spaces) => angleOf(spaces) >= minDeg - slack)
+    .filter((spaces) => angleOf(spaces) >= minDeg - slip)
     .toSorted((a, b) => Math.abs(angleOf(a) - bestDeg) - Math.abs(angleOf(b) - bestDeg));
   return candidates[0] ?? 0;
 }
@@ -85,7 +85,7 @@ export const braceAngle = defineFigure({
       planAngleDeg,
       braceLengthM: Math.hypot(slopeLengthM, runM),
       warnings:
-        planAngleDeg !== null && planAngleDeg < minDeg - slack
+        planAngleDeg !== null && planAngleDeg < minDeg - slip
           ? [
               `In plan the brace is at ${about(planAngleDeg)}°, flatter than ${minDeg}°: cross fewer spaces if the maker’s sheet counts it in plan.`,
             ]

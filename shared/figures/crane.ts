@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { defineFigure } from './figure.ts';
 import { outcome, quantity, verdict } from './inputs.ts';
+import { slip } from './numerics.ts';
 import { about, atLeast } from './words.ts';
 
 export const crane = defineFigure({
@@ -46,7 +47,7 @@ export const crane = defineFigure({
       grossKg,
       utilisationPercent,
       spareKg: (ratedKg * limitPercent) / 100 - grossKg,
-      within: utilisationPercent <= limitPercent,
+      within: utilisationPercent <= limitPercent + slip,
     };
   },
   reading: ({ limitPercent }, { grossKg, utilisationPercent, within }) =>

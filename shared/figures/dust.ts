@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { defineFigure, refuseInput } from './figure.ts';
 import { list, outcome, quantity, rowName, verdict, warnings } from './inputs.ts';
+import { slip } from './numerics.ts';
 import { about } from './words.ts';
 
 export const dust = defineFigure({
@@ -20,7 +21,7 @@ export const dust = defineFigure({
       30,
     ),
     limitMgPerM3: quantity('Limit over 8 hours', 'mg/m³', {
-      over: 0,
+      least: 0.000001,
       most: 1000,
       help: 'The limit in force for this dust on the day of the work.',
     }),
@@ -51,18 +52,18 @@ export const dust = defineFigure({
   ],
   calculate: ({ tasks, limitMgPerM3 }) => {
     const sampledHours = tasks.reduce((sum, { hours }) => sum + hours, 0);
-    if (sampledHours > 24 + 1e-9)
+    if (sampledHours > 24 + slip)
       throw refuseInput('tasks', 'Tasks must come to at most 24 h: a day has no more.');
     const twaMgPerM3 = tasks.reduce((sum, { mgPerM3, hours }) => sum + mgPerM3 * hours, 0) / 8;
     const short = 8 - sampledHours;
     return {
       twaMgPerM3,
       ratio: twaMgPerM3 / limitMgPerM3,
-      within: twaMgPerM3 <= limitMgPerM3,
+      within: twaMgPerM3 / limitMgPerM3 <= 1 + slip,
       sampledHours,
       warnings: [
-        ...(short > 1e-9 ? [`${about(short, 2)} of 8 hours have no measurement and count as no dust.`] : []),
-        ...(short < -1e-9
+        ...(short > slip ? [`${about(short, 2)} of 8 hours have no measurement and count as no dust.`] : []),
+        ...(short < -slip
           ? ['The shift is over 8 hours: ask whether the limit must be lowered for it.']
           : []),
       ],
@@ -71,7 +72,7 @@ export const dust = defineFigure({
   reading: ({ limitMgPerM3 }, { twaMgPerM3, ratio, within, sampledHours }) =>
     `The day averages ${about(twaMgPerM3, 4)} mg/m³, ${about(ratio * 100, 0)} % of the limit of ${about(limitMgPerM3, 4)}: ${
       within ? 'within it' : 'over it. Wet or extract the dust, shorten the task, then choose the mask'
-    }.${sampledHours < 8 - 1e-9 ? ' Time without a measurement counts as no dust.' : ''}`,
+    }.${sampledHours < 8 - slip ? ' Time without a measurement counts as no dust.' : ''}`,
   over: ({ limitMgPerM3 }, { twaMgPerM3, within }) =>
     within
       ? []

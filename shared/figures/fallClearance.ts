@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { defineFigure, refuseInput } from './figure.ts';
 import { outcome, quantity, warnings } from './inputs.ts';
+import { slip } from './numerics.ts';
 import { about, atLeast } from './words.ts';
 
 const metres = (label: string, help: string) => quantity(label, 'm', { least: 0, most: 15, help });
@@ -74,16 +75,15 @@ export const fallClearance = defineFigure({
         'anchorAboveAttachmentM',
         'Anchor above the attachment must be within reach of the lanyard: this one could not be clipped on.',
       );
-    const slack = 1e-9;
     return {
       freeFallM,
       requiredBelowAnchorM,
       requiredBelowFeetM,
       warnings: [
         ...freeFallLimits
-          .filter(({ metres: limit }) => freeFallM > limit + slack)
+          .filter(({ metres: limit }) => freeFallM > limit + slip)
           .map(({ metres: limit, where }) => `The free fall is over ${limit} m, the most in ${where}.`),
-        ...(Math.abs(anchorAboveAttachmentM) > lanyardM + slack
+        ...(Math.abs(anchorAboveAttachmentM) > lanyardM + slip
           ? ['The lanyard does not reach from the anchor to the harness as given: check the lengths.']
           : []),
         ...(anchorAboveAttachmentM < 0 ? ['The anchor is below the harness: clip on higher.'] : []),
@@ -93,5 +93,5 @@ export const fallClearance = defineFigure({
   reading: (_, { freeFallM, requiredBelowAnchorM, requiredBelowFeetM }) =>
     `There must be ${atLeast(requiredBelowAnchorM, 2)} m clear below the anchor, ${atLeast(requiredBelowFeetM, 2)} m below the feet; with less, a fall ends on what is below. The free fall is ${about(freeFallM, 2)} m.`,
   over: (_, { freeFallM }) =>
-    freeFallM > 2.0 + 1e-9 ? [`A free fall of ${about(freeFallM, 2)} m is over 2.0 m.`] : [],
+    freeFallM > 2.0 + slip ? [`A free fall of ${about(freeFallM, 2)} m is over 2.0 m.`] : [],
 });

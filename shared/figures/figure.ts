@@ -80,16 +80,21 @@ export function workOut<I extends z.ZodObject, O extends z.ZodObject>(figure: Fi
 export const refuseInput = (field: string, message: string): Refusal =>
   new Refusal('invalid', message, { fields: { [field]: message } });
 
+const notNamed = 'Give the inputs as named values.';
+
 function parseInput<I extends z.ZodObject>(schema: I, given: unknown): z.output<I> {
   const parsed = schema.safeParse(given);
   if (parsed.success) return parsed.data;
   const fields: Record<string, string> = {};
   for (const issue of parsed.error.issues) {
-    if (issue.code !== 'unrecognized_keys') fields[issue.path.join('.')] ??= issue.message;
+    const path = issue.path.join('.');
+    if (issue.code === 'invalid_type' && issue.expected === 'object')
+      fields[path] = path === '' ? notNamed : `${path} must be a set of named values.`;
+    else if (issue.code !== 'unrecognized_keys') fields[path] ??= issue.message;
     else
       for (const key of issue.keys) fields[[...issue.path, key].join('.')] = `This figure takes no “${key}”.`;
   }
-  const [first = 'Give the inputs as named values.', ...others] = Object.values(fields);
+  const [first = notNamed, ...others] = Object.values(fields);
   const message = others.length === 0 ? first : `${first} (and ${others.length} more)`;
   throw new Refusal('invalid', message, { fields });
 }

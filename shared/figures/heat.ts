@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { defineFigure } from './figure.ts';
 import { outcome, quantity, warnings } from './inputs.ts';
+import { slip } from './numerics.ts';
 import { about } from './words.ts';
 
 export const toFahrenheit = (celsius: number): number => celsius * 1.8 + 32;
@@ -40,13 +41,11 @@ export const regression = (t: number, r: number): number =>
   0.00085282 * t * r * r -
   0.00000199 * t * t * r * r;
 
-// 26.67 °C comes back as 79.9999… °F.
-const slack = 1e-9;
-
+// The bounds give way by `slip`: 26.67 °C comes back as 79.9999… °F.
 function adjustment(t: number, r: number): number {
-  if (r < 13 && t >= 80 - slack && t <= 112 + slack)
+  if (r < 13 && t >= 80 - slip && t <= 112 + slip)
     return -((13 - r) / 4) * Math.sqrt(Math.max(0, 17 - Math.abs(t - 95)) / 17);
-  if (r > 85 && t >= 80 - slack && t <= 87 + slack) return ((r - 85) / 10) * ((87 - t) / 5);
+  if (r > 85 && t >= 80 - slip && t <= 87 + slip) return ((r - 85) / 10) * ((87 - t) / 5);
   return 0;
 }
 
@@ -77,7 +76,7 @@ export const heat = defineFigure({
   limits: [
     '0 to 50 °C, humidity 0 to 100 %. Shade and a light wind: full sun adds up to 15 °F (8 °C).',
     'The printed chart ends at 137 °F (58 °C); above it the number is beyond the data and says so.',
-    'The fit is good to about 1.3 °F; adding the adjustments moves single chart cells by 1 °F.',
+    'The fit is good to about 1.3 °F; the adjustments move single cells of the printed chart, which leaves them out, by up to 2 °F, upwards where it is humid. In dry air the number steps down by up to 2.5 °F where the simple form hands over to the regression.',
   ],
   caution:
     'Says nothing of hard work, clothing or people new to the heat: for those use the work heat figure. An older chart has its bands at 105 and 130 °F.',
@@ -97,7 +96,7 @@ export const heat = defineFigure({
     const t = toFahrenheit(temperatureC);
     const simpleF = (0.5 * (t + 61 + 1.2 * (t - 68) + 0.094 * r) + t) / 2;
     const regressionF = regression(t, r);
-    const full = simpleF >= 80 - slack;
+    const full = simpleF >= 80 - slip;
     const adjustmentF = full ? adjustment(t, r) : 0;
     const heatIndexF = full ? regressionF + adjustmentF : simpleF;
     return {

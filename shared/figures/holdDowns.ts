@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { defineFigure, refuseInput } from './figure.ts';
 import { list, outcome, quantity } from './inputs.ts';
+import { slip } from './numerics.ts';
 import { atLeast } from './words.ts';
 
 const along = (label: string) => quantity(label, 'mm', { least: 0, most: 50_000 });
@@ -84,7 +85,7 @@ export const holdDowns = defineFigure({
       const from = fixed[i] ?? 0;
       const open = openings.some(({ fromMm, toMm }) => from >= fromMm - same && to <= toMm + same);
       // 6000 / 1200 must stay 5 however the division falls.
-      const parts = open ? 1 : Math.max(1, Math.ceil((to - from) / spacingMm - 1e-9));
+      const parts = open ? 1 : Math.max(1, Math.ceil((to - from) / spacingMm - slip));
       for (let part = 1; part < parts; part++) positionsMm.push(from + ((to - from) * part) / parts);
       positionsMm.push(to);
       if (!open) widestMm = Math.max(widestMm, (to - from) / parts);

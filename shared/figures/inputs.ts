@@ -71,7 +71,13 @@ export const list = <T extends z.ZodType>(label: string, item: T, least: number,
     .meta({ title: label });
 
 /** What a row is called in the reading: “grinder”. */
-export const rowName = z.string().trim().min(1).max(60).optional().meta({ title: 'Name' });
+export const rowName = z
+  .string({ error: 'Name must be words.' })
+  .trim()
+  .min(1, 'Name must not be empty.')
+  .max(60, 'Name must be at most 60 characters.')
+  .optional()
+  .meta({ title: 'Name' });
 
 /** A number in a result. */
 export const outcome = (label: string, unit = '') => z.number().meta({ title: label, unit });

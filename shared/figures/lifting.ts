@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { defineFigure, refuseInput } from './figure.ts';
 import { choice, outcome, quantity } from './inputs.ts';
 import { type Grip, frequencyRows, gripFactors, gripNames, leftOut } from './lifting-tables.ts';
+import { slip } from './numerics.ts';
 import { about, noMoreThan } from './words.ts';
 
 const beyond = 'beyond it the equation gives a limit of 0 kg';
@@ -64,7 +65,8 @@ const output = z.strictObject({
       rwlKg: outcome('Limit where it is put down', 'kg'),
       liftingIndex: outcome('Load over limit'),
     })
-    .optional(),
+    .optional()
+    .meta({ title: 'Where it is put down' }),
   leftOut: z.array(z.string()).meta({ title: 'The equation leaves out' }),
 });
 
@@ -142,11 +144,11 @@ export const lifting = defineFigure({
     const limit = `One person should lift no more than ${noMoreThan(rwlKg)} kg here${
       rwlKg < originRwlKg ? ' (the putting-down decides)' : ''
     }`;
-    if (liftingIndex <= 1) return `${limit}; ${about(loadKg)} kg is within it.`;
+    if (liftingIndex <= 1 + slip) return `${limit}; ${about(loadKg)} kg is within it.`;
     return `${limit}. ${about(loadKg)} kg is ${about(liftingIndex)} times that: use a machine or more people, split the load, or bring it closer.`;
   },
   over: ({ loadKg }, { rwlKg, liftingIndex }) =>
-    liftingIndex > 1
+    liftingIndex > 1 + slip
       ? [`${about(loadKg)} kg is over the recommended limit of ${noMoreThan(rwlKg)} kg for one person.`]
       : [],
 });

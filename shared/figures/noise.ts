@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { defineFigure, refuseInput } from './figure.ts';
 import { list, oneOf, outcome, outcomeOrNone, quantity, rowName, warnings } from './inputs.ts';
+import { slip } from './numerics.ts';
 import { about, listed, noLongerThan } from './words.ts';
 
 const input = z.strictObject({
@@ -32,17 +33,14 @@ export const allowedHoursAt = (levelDb: number, criterionDb: number, exchangeDb:
 export const levelOfDose = (dosePercent: number, criterionDb: number, exchangeDb: 3 | 5): number =>
   printedFactor[exchangeDb] * Math.log10(dosePercent / 100) + criterionDb;
 
-const classes = [
-  { below: 90, protector: 1, slc80: '10 to 13 dB' },
-  { below: 95, protector: 2, slc80: '14 to 17 dB' },
-  { below: 100, protector: 3, slc80: '18 to 21 dB' },
-  { below: 105, protector: 4, slc80: '22 to 25 dB' },
-  { below: 110, protector: 5, slc80: '26 dB or more' },
+/** AS/NZS 1270: the class for days below this level, and the attenuation (SLC80) it starts at. */
+export const protectorClasses = [
+  { below: 90, protectorClass: 1, slc80Db: 10 },
+  { below: 95, protectorClass: 2, slc80Db: 14 },
+  { below: 100, protectorClass: 3, slc80Db: 18 },
+  { below: 105, protectorClass: 4, slc80Db: 22 },
+  { below: 110, protectorClass: 5, slc80Db: 26 },
 ] as const;
-
-/** AS/NZS 1270 class for a day of this level; null at 110 dB(A) and over, where a specialist must choose. */
-export const protectorClassFor = (laeq8hDb: number): number | null =>
-  classes.find(({ below }) => laeq8hDb < below)?.protector ?? null;
 
 const output = z.strictObject({
   dailyDb: outcome('The day, as 8 hours', 'dB(A)'),
@@ -53,6 +51,7 @@ const output = z.strictObject({
   pascalSquaredHours: outcomeOrNone('Sound exposure', 'Pa²h'),
   points: outcomeOrNone('Exposure points'),
   protectorClass: outcomeOrNone('Hearing protector class'),
+  slc80Db: outcomeOrNone('SLC80 of that class, from', 'dB'),
   warnings,
 });
 
@@ -69,7 +68,7 @@ export const noise = defineFigure({
     'Levels of 40 to 140 dB(A), 24 hours at most. Measured at the ear without protectors.',
     'Every task given counts. For the US limit of 90 dB(A) leave out tasks below 90, for hearing conservation those below 80.',
     'Peaks are a limit of their own: 140 dB(C). No figure from average levels shows that they are kept.',
-    'The dose halves time for each 3 (or 5) dB exactly; the day’s level adds energy, where a doubling is 3.01 dB. At the limit the two differ by less than half a per cent.',
+    'The dose halves time for each 3 (or 5) dB exactly; the day’s level adds energy, where a doubling is 3.01 dB. They part by a quarter of a per cent for each 3 dB away from the limit.',
   ],
   caution:
     'Bring the noise down before reaching for muffs. The class is for muffs or plugs that fit and are worn all the time; below 70 dB(A) at the ear is too much protection.',
@@ -91,7 +90,7 @@ export const noise = defineFigure({
   ],
   calculate: ({ tasks, criterionDb, exchangeDb }) => {
     const totalHours = tasks.reduce((sum, { hours }) => sum + hours, 0);
-    if (totalHours > 24 + 1e-9)
+    if (totalHours > 24 + slip)
       throw refuseInput('tasks', 'Tasks must come to at most 24 h: a day has no more.');
     const energy = tasks.reduce((sum, { levelDb, hours }) => sum + hours * 10 ** (levelDb / 10), 0);
     const laeq8hDb = 10 * Math.log10(energy / 8);
@@ -99,6 +98,8 @@ export const noise = defineFigure({
     const dosePercent =
       100 * tasks.reduce((sum, { hours }, i) => sum + hours / (allowedHours[i] ?? Infinity), 0);
     const equalEnergy = exchangeDb === 3;
+    // None from 110 dB(A): a specialist must choose.
+    const worn = protectorClasses.find(({ below }) => laeq8hDb < below - slip);
     return {
       dailyDb: equalEnergy ? laeq8hDb : levelOfDose(dosePercent, criterionDb, exchangeDb),
       laeq8hDb,
@@ -109,13 +110,14 @@ export const noise = defineFigure({
       points: equalEnergy
         ? tasks.reduce((sum, { levelDb, hours }) => sum + 100 * (hours / 8) * 10 ** ((levelDb - 85) / 10), 0)
         : null,
-      protectorClass: protectorClassFor(laeq8hDb),
+      protectorClass: worn?.protectorClass ?? null,
+      slc80Db: worn?.slc80Db ?? null,
       warnings: warningsFor(tasks, laeq8hDb, exchangeDb),
     };
   },
   reading: ({ tasks, criterionDb }, { dailyDb, dosePercent, allowedHours, protectorClass }) => {
     const day = `The day comes to ${about(dailyDb)} dB(A), ${about(dosePercent, 0)} % of the limit.`;
-    if (dosePercent <= 100) return `${day} It is not over ${about(criterionDb)} dB(A).`;
+    if (dosePercent <= 100 + slip) return `${day} It is not over ${about(criterionDb)} dB(A).`;
     const times = tasks.map(
       ({ name, levelDb }, i) =>
         `${name ?? `${about(levelDb)} dB(A)`} for ${noLongerThan(allowedHours[i] ?? 0)}`,
@@ -127,7 +129,7 @@ export const noise = defineFigure({
     return `${day} Alone, the limit allows ${listed(times)}. Quieten or shorten the work; until then ${class_}.`;
   },
   over: ({ criterionDb }, { dailyDb, dosePercent }) =>
-    dosePercent > 100
+    dosePercent > 100 + slip
       ? [`The day’s noise is ${about(dailyDb)} dB(A), over the limit of ${about(criterionDb)} dB(A).`]
       : [],
 });

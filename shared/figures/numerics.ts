@@ -1,3 +1,6 @@
+/** What floating-point sums may be off by: a value within this of its limit is at the limit. */
+export const slip = 1e-9;
+
 /** Lanczos coefficients (g = 7, n = 9): about 15 correct digits. */
 const lanczos = [
   0.9999999999998099, 676.5203681218851, -1259.1392167224028, 771.3234287776531, -176.6150291621406,

@@ -17,7 +17,7 @@ export const powerLine = defineFigure({
       .trim()
       .toLowerCase()
       .regex(/^[a-z]{2}(-[a-z0-9]+)*$/, 'Place must be the name of a profile, such as au-sa or us.')
-      .max(40)
+      .max(40, 'Place must be at most 40 characters.')
       .meta({ title: 'Place', description: `One of ${known.join(', ')}, or a place within one.` }),
     kilovolts: quantity('Line voltage', 'kV', {
       over: 0,

@@ -3,14 +3,6 @@ import { defineFigure } from './figure.ts';
 import { outcome, quantity } from './inputs.ts';
 import { about } from './words.ts';
 
-/** Chance that a sample of n from N, of which D are bad, shows none: C(N − D, n) / C(N, n). */
-export function chanceOfNone(population: number, bad: number, size: number): number {
-  let chance = 1;
-  for (let drawn = 0; drawn < size && chance > 0; drawn++)
-    chance *= Math.max(0, population - bad - drawn) / (population - drawn);
-  return chance;
-}
-
 export const sampleSize = defineFigure({
   id: 'sampleSize',
   title: 'Sample to find trouble',

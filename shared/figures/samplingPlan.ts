@@ -48,8 +48,8 @@ export const samplingPlan = defineFigure({
     aql: oneOf('Acceptance quality limit', '%', aqls),
   }),
   output: z.strictObject({
-    letter: z.enum(codeLetters).meta({ title: 'Code letter of the plan' }),
-    lotLetter: z.enum(codeLetters).meta({ title: 'Code letter of the lot, before the arrows' }),
+    letter: z.enum(codeLetters).meta({ title: 'Code letter' }),
+    planLetter: z.enum(codeLetters).meta({ title: 'Letter of the plan, arrows followed' }),
     size: outcome('To check'),
     accept: outcome('Pass with at most'),
     reject: outcome('Reject from'),
@@ -78,15 +78,15 @@ export const samplingPlan = defineFigure({
     },
   ],
   calculate: ({ lotSize, level, aql }) => {
-    const lotLetter = lotRows.find(({ upTo }) => lotSize <= upTo)?.[level] ?? 'R';
-    const { letter, accept } = planFor(lotLetter, aql);
-    const planSize = sampleSizes[letter];
+    const letter = lotRows.find(({ upTo }) => lotSize <= upTo)?.[level] ?? 'R';
+    const plan = planFor(letter, aql);
+    const planSize = sampleSizes[plan.letter];
     return {
       letter,
-      lotLetter,
+      planLetter: plan.letter,
       size: Math.min(planSize, lotSize),
-      accept,
-      reject: accept + 1,
+      accept: plan.accept,
+      reject: plan.accept + 1,
       planSize,
       inspectAll: planSize >= lotSize,
     };

@@ -41,7 +41,7 @@ export const surveySize = defineFigure({
   calculate: ({ population, margin, confidence }) => {
     const chiSquare = chiSquareOne(confidence);
     const exact = (chiSquare * population * 0.25) / (margin ** 2 * (population - 1) + chiSquare * 0.25);
-    return { size: Math.round(exact), exact, chiSquare };
+    return { size: Math.max(1, Math.round(exact)), exact, chiSquare };
   },
   reading: ({ population, margin, confidence }, { size }) =>
     `Take ${size} of ${population}, drawn by chance, to know the share to within ${about(margin * 100, 2)} % with ${about(confidence * 100, 1)} % confidence.`,

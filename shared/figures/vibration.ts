@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { defineFigure, refuseInput } from './figure.ts';
 import { list, outcome, quantity, rowName } from './inputs.ts';
+import { slip } from './numerics.ts';
 import { about, listed, noLongerThan } from './words.ts';
 
 export const actionMs2 = 2.5;
@@ -58,7 +59,7 @@ export const vibration = defineFigure({
   ],
   calculate: ({ tools }) => {
     const totalHours = tools.reduce((sum, { hours }) => sum + hours, 0);
-    if (totalHours > 24 + 1e-9)
+    if (totalHours > 24 + slip)
       throw refuseInput('tools', 'Tools must come to at most 24 h: a day has no more.');
     const doses = tools.map(({ magnitudeMs2, hours }) => magnitudeMs2 ** 2 * hours);
     const dose = doses.reduce((sum, each) => sum + each, 0);
@@ -81,15 +82,15 @@ export const vibration = defineFigure({
         ),
       );
     const alone = tools.length > 1 ? ', each alone' : '';
-    if (a8Ms2 > limitMs2)
+    if (a8Ms2 > limitMs2 + slip)
       return `${day}: above the limit, so not allowed where it applies. Limit ${times(hoursToLimit)} at the very most, ${times(hoursToAction)} to stay at the action value${alone}.`;
-    if (a8Ms2 >= actionMs2)
+    if (a8Ms2 >= actionMs2 - slip)
       return `${day}: at or above the action value. To stay at it, limit ${times(hoursToAction)} today${alone}.`;
     return `${day}: below the action value.`;
   },
   over: (_, { a8Ms2 }) => {
-    if (a8Ms2 > limitMs2) return [`Vibration of ${about(a8Ms2, 2)} m/s² is over the limit of 5 m/s².`];
-    return a8Ms2 >= actionMs2
+    if (a8Ms2 > limitMs2 + slip) return [`Vibration of ${about(a8Ms2, 2)} m/s² is over the limit of 5 m/s².`];
+    return a8Ms2 >= actionMs2 - slip
       ? [`Vibration of ${about(a8Ms2, 2)} m/s² reaches the action value of 2.5 m/s².`]
       : [];
   },

@@ -1,16 +1,20 @@
-/** Numbers for a screen; results themselves are never rounded. A limit to keep under is rounded down, a need is rounded up. */
-const slip = 1e-9;
+import { slip } from './numerics.ts';
 
+/** Numbers for a screen; results themselves are never rounded. A limit to keep under is rounded down, a need is rounded up. */
 export const about = (value: number, digits = 1): string => Number(value.toFixed(digits)).toString();
 
 export function noMoreThan(value: number, digits = 1): string {
-  const scale = 10 ** digits;
-  return (Math.floor(value * scale * (1 + slip)) / scale).toString();
+  return rounded(value, digits, (scaled) => Math.floor(scaled * (1 + slip)));
 }
 
 export function atLeast(value: number, digits = 1): string {
+  return rounded(value, digits, (scaled) => Math.ceil(scaled * (1 - slip)));
+}
+
+function rounded(value: number, digits: number, round: (scaled: number) => number): string {
   const scale = 10 ** digits;
-  return (Math.ceil(value * scale * (1 - slip)) / scale).toString();
+  // A number with no decimals left has nothing to round.
+  return String(value >= 2 ** 53 ? value : round(value * scale) / scale);
 }
 
 /** A time to keep under, down to the whole minute: “48 minutes”, “6 h 20 min”. */

@@ -1,7 +1,8 @@
 import { z } from 'zod';
 import { defineFigure } from './figure.ts';
 import { outcome, outcomeOrNone, quantity, verdict, warnings, yesNo } from './inputs.ts';
-import { about, noMoreThan } from './words.ts';
+import { slip } from './numerics.ts';
+import { about } from './words.ts';
 
 const celsius = (label: string, help: string) => quantity(label, '°C', { least: -10, most: 80, help });
 
@@ -66,7 +67,7 @@ export const workHeat = defineFigure({
       limitC,
       marginC: limitC - wbgtC,
       airShareC,
-      within: wbgtC <= limitC,
+      within: wbgtC <= limitC + slip,
       warnings: [
         ...(naturalWetBulbC > globeC
           ? ['The wet bulb reads hotter than the globe: check that the two are not swapped.']
@@ -78,9 +79,9 @@ export const workHeat = defineFigure({
     };
   },
   reading: ({ acclimatised }, { wbgtC, limitC, within }) =>
-    `WBGT ${about(wbgtC)} °C against a limit of ${noMoreThan(limitC)} °C for people ${
+    `WBGT ${about(wbgtC, 2)} °C against a limit of ${about(limitC, 2)} °C for people ${
       acclimatised ? 'used to' : 'not yet used to'
     } the heat: ${within ? 'within it. Keep water, shade and breaks' : 'over it. Slow the work, rest in the cool, change the hours, or stop'}.`,
   over: (_, { wbgtC, limitC, within }) =>
-    within ? [] : [`WBGT ${about(wbgtC)} °C is over the limit of ${noMoreThan(limitC)} °C for this work.`],
+    within ? [] : [`WBGT ${about(wbgtC, 2)} °C is over the limit of ${about(limitC, 2)} °C for this work.`],
 });

@@ -96,8 +96,24 @@ test('four people get the half of three, with the caution that four is unlikely 
 });
 
 describe('noise and vibration', () => {
-  test('exactly 90 dB(A) over 8 hours needs class 2, though its logarithm falls a hair short', () => {
-    expect(noise.compute({ tasks: [{ levelDb: 90, hours: 8 }] }).protectorClass).toBe(2);
+  test('a day at exactly the start of a class is in that class, in however many parts it comes', () => {
+    for (const [levelDb, protectorClass] of [
+      [90, 2],
+      [95, 3],
+      [100, 4],
+      [105, 5],
+      [110, null],
+    ] as const)
+      // prettier-ignore
+      for (let parts = 1; parts <= 30; parts++) {
+        const tasks = Array.from({ length: parts }, () => ({ levelDb, hours: 8 / parts }));
+        expect(noise.compute({ tasks }).protectorClass, `${levelDb} dB(A) in ${parts}`).toBe(protectorClass);
+      }
+  });
+
+  test('the factor of 29 CFR 1910.95 is 16.61 as printed, not rounded further', () => {
+    const tenth = noise.compute({ tasks: [{ levelDb: 90, hours: 0.8 }], criterionDb: 90, exchangeDb: 5 });
+    expect(tenth.dailyDb).toBeCloseTo(90 - 16.61, 9);
   });
 
   test('from 110 dB(A) no class is given and a specialist is asked for', () => {
@@ -260,6 +276,14 @@ describe('heat', () => {
     expect(warm.heatIndexF).toBe(warm.regressionF + warm.adjustmentF);
   });
 
+  test('dry air takes the adjustment up to 13 % and damp air from 85 %', () => {
+    const adjustmentF = (fahrenheit: number, humidityPercent: number) =>
+      heat.compute({ temperatureC: (fahrenheit - 32) / 1.8, humidityPercent }).adjustmentF;
+    expect(adjustmentF(95, 12.5)).toBeCloseTo(-0.125, 9);
+    expect([adjustmentF(95, 13), adjustmentF(82, 85), adjustmentF(113, 5)]).toEqual([0, 0, 0]);
+    expect(adjustmentF(82, 86)).toBeCloseTo(0.1, 9);
+  });
+
   test('a number beyond the printed chart says that it is no number', () => {
     expect(heat.compute({ temperatureC: 45, humidityPercent: 60 }).warnings.join(' ')).toContain(
       'beyond the published chart',
@@ -275,6 +299,8 @@ describe('heat', () => {
     expect(band(20, 50)).toBe('none');
     expect(band(29, 50)).toBe('caution');
     expect(band(33, 50)).toBe('extreme caution');
+    // 96 °F at 45 % is 104 °F on the chart: an older table would still say extreme caution.
+    expect(band(64 / 1.8, 45)).toBe('danger');
     expect(band(38, 45)).toBe('danger');
     expect(band(40, 60)).toBe('extreme danger');
   });
@@ -354,6 +380,16 @@ describe('sampling and risk', () => {
       size: 20,
       inspectAll: false,
     });
+  });
+
+  test('levels I and III have the letters of two transcriptions of MIL-STD-105E Table I', () => {
+    const lotSizes = [
+      8, 15, 25, 50, 90, 150, 280, 500, 1200, 3200, 10_000, 35_000, 150_000, 500_000, 500_001,
+    ];
+    const letters = (level: string) =>
+      lotSizes.map((lotSize) => samplingPlan.compute({ lotSize, level, aql: 1 }).letter).join('');
+    expect(letters('I')).toBe('AABCCDEFGHJKLMN');
+    expect(letters('III')).toBe('BCDEFGHJKLMNPQR');
   });
 
   test('levels I, II and III ask for more and more', () => {

@@ -29,7 +29,7 @@ function tool(name, args) {
 if (isRoot) {
   chmodSync(folder, 0o777);
 }
-let status = 1;
+let status;
 try {
   tool('initdb', ['-D', data, '-A', 'trust', '-U', 'toeboard', '--encoding=UTF8', '--locale=C.UTF-8']);
   tool('pg_ctl', [

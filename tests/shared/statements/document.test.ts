@@ -74,12 +74,10 @@ const step = fc
     attrs: { ...origin(), card: '', needs: noNeeds, questions: [], sources: [], caution: '' },
     content: [title, ...rest],
   }));
-const statement = fc
-  .array(fc.oneof(paragraph, step), { maxLength: 5 })
-  .map((rest): NodeJson => ({
-    type: 'doc',
-    content: [{ type: 'titleBlock', attrs: noParticulars }, ...rest],
-  }));
+const statement = fc.array(fc.oneof(paragraph, step), { maxLength: 5 }).map((rest): NodeJson => ({
+  type: 'doc',
+  content: [{ type: 'titleBlock', attrs: noParticulars }, ...rest],
+}));
 
 describe('the document', () => {
   test('any statement that the schema allows is found without fault, and comes back from the editor’s form as it was', () => {

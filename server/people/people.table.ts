@@ -1,11 +1,5 @@
-import { boolean, foreignKey, index, pgTable, primaryKey, text, timestamp, uuid } from 'drizzle-orm/pg-core';
-import { organisations } from '../account/account.table.ts';
-
-const at = () => timestamp({ withTimezone: true, mode: 'date' });
-const org = () =>
-  uuid()
-    .notNull()
-    .references(() => organisations.id);
+import { boolean, foreignKey, index, pgTable, primaryKey, text, uuid } from 'drizzle-orm/pg-core';
+import { at, org } from '../account/columns.ts';
 
 export const employers = pgTable(
   'employers',

@@ -6,22 +6,16 @@ import {
   pgTable,
   primaryKey,
   text,
-  timestamp,
   uniqueIndex,
   uuid,
 } from 'drizzle-orm/pg-core';
 import type { Declaration } from '../../shared/signons/signons.api.ts';
 import type { DrawnSignature } from '../../shared/signons/signature.ts';
-import { accounts, organisations } from '../account/account.table.ts';
+import { accounts } from '../account/account.table.ts';
+import { at, org } from '../account/columns.ts';
 import { people } from '../people/people.table.ts';
 import { sites } from '../sites/sites.table.ts';
 import { revisions, statements } from '../statements/statements.table.ts';
-
-const at = () => timestamp({ withTimezone: true, mode: 'date' });
-const org = () =>
-  uuid()
-    .notNull()
-    .references(() => organisations.id);
 
 /** A phone that is tied to a person. The cookie carries the secret; only its hash is kept. */
 export const devices = pgTable(

@@ -1,12 +1,6 @@
-import { date, foreignKey, pgTable, primaryKey, text, timestamp, unique, uuid } from 'drizzle-orm/pg-core';
-import { organisations } from '../account/account.table.ts';
+import { date, foreignKey, pgTable, primaryKey, text, unique, uuid } from 'drizzle-orm/pg-core';
+import { at, org } from '../account/columns.ts';
 import { people } from '../people/people.table.ts';
-
-const at = () => timestamp({ withTimezone: true, mode: 'date' });
-const org = () =>
-  uuid()
-    .notNull()
-    .references(() => organisations.id);
 
 export const sites = pgTable(
   'sites',

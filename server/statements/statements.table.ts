@@ -7,20 +7,12 @@ import {
   pgTable,
   primaryKey,
   text,
-  timestamp,
   unique,
   uuid,
 } from 'drizzle-orm/pg-core';
 import type { NodeJson } from '../../shared/statements/document/json.ts';
-import { accounts, organisations } from '../account/account.table.ts';
+import { account, at, org } from '../account/columns.ts';
 import { sites } from '../sites/sites.table.ts';
-
-const at = () => timestamp({ withTimezone: true, mode: 'date' });
-const org = () =>
-  uuid()
-    .notNull()
-    .references(() => organisations.id);
-const account = () => uuid().references(() => accounts.id);
 
 export const statements = pgTable(
   'statements',

@@ -7,21 +7,15 @@ import {
   pgTable,
   primaryKey,
   text,
-  timestamp,
   unique,
   uuid,
 } from 'drizzle-orm/pg-core';
 import type { TalkBody } from '../../shared/talks/talks.api.ts';
-import { accounts, organisations } from '../account/account.table.ts';
+import { accounts } from '../account/account.table.ts';
+import { at, org } from '../account/columns.ts';
 import { people } from '../people/people.table.ts';
 import { signatureColumns } from '../signons/signons.table.ts';
 import { sites } from '../sites/sites.table.ts';
-
-const at = () => timestamp({ withTimezone: true, mode: 'date' });
-const org = () =>
-  uuid()
-    .notNull()
-    .references(() => organisations.id);
 
 /** Toolbox talks. Once closed a trigger refuses every change. */
 export const talks = pgTable(

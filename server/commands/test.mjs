@@ -1,28 +1,63 @@
 // `npm test` on a fresh machine: installs what is missing, Debian's Chromium included, then runs every check and stops at the first
 // that fails.
-import { spawnSync } from 'node:child_process';
+import { spawn, spawnSync } from 'node:child_process';
 import { accessSync, constants, existsSync } from 'node:fs';
 import { delimiter, join } from 'node:path';
-import { buildIfStale, installIfStale, run, stopIfNodeIsOld } from './fresh.mjs';
+import { buildIfStale, installIfStale, root, run, stopIfNodeIsOld } from './fresh.mjs';
 
 stopIfNodeIsOld();
 installIfStale();
 findOrInstallChromium();
-const vitest = (project) => run('npx', ['vitest', 'run', '--project', project]);
-step('Lint', () => run('npx', ['eslint', '.']));
-step('Format', () => run('npx', ['prettier', '--check', '--log-level', 'warn', '.']));
-step('Types', () => run('npx', ['tsc', '--noEmit']));
-step('Rules and data', () => vitest('shared'));
-step('Server', () => vitest('server'));
-step('Pages', () => vitest('src'));
+const vitest = (project) => ['npx', 'vitest', 'run', '--project', project];
+// Two chains side by side, one for each of two cores; each check's output is shown whole when it ends.
+await together(
+  [
+    ['Lint', ['npx', 'eslint', '.']],
+    ['Format', ['npx', 'prettier', '--check', '--log-level', 'warn', '.']],
+    ['Types', ['npx', 'tsc', '--noEmit']],
+  ],
+  [
+    ['Rules and data', vitest('shared')],
+    ['Pages', vitest('src')],
+  ],
+);
+await check('Server', vitest('server'));
 step('Build', () => buildIfStale());
-step('Browser', () => vitest('e2e'));
+await check('Browser', vitest('e2e'));
+console.log('\nEverything is well.');
 
-function step(name, check) {
+function step(name, work) {
   const start = Date.now();
   console.log(`\n== ${name}`);
-  check();
+  work();
   console.log(`== ${name}: well, ${Math.round((Date.now() - start) / 1000)} s`);
+}
+
+async function together(...chains) {
+  await Promise.all(
+    chains.map(async (chain) => {
+      for (const [name, command] of chain) await check(name, command);
+    }),
+  );
+}
+
+/** Runs one check; the first that fails ends everything. */
+function check(name, [command, ...args]) {
+  const start = Date.now();
+  return new Promise((resolve) => {
+    const child = spawn(command, args, { cwd: root, stdio: ['ignore', 'pipe', 'pipe'] });
+    let output = '';
+    for (const stream of [child.stdout, child.stderr]) stream.on('data', (chunk) => (output += chunk));
+    child.on('close', (code) => {
+      console.log(`\n== ${name}\n${output.trim()}`);
+      if (code !== 0) {
+        console.log(`== ${name}: not well`);
+        process.exit(1);
+      }
+      console.log(`== ${name}: well, ${Math.round((Date.now() - start) / 1000)} s`);
+      resolve();
+    });
+  });
 }
 
 function findOrInstallChromium() {

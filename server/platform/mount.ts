@@ -5,6 +5,7 @@ import { Refusal } from '#shared/kernel/refusal.ts';
 import { type Act, mayDo } from '#shared/kernel/roles.ts';
 import { type ActorOf, type DeviceActor, deviceOf, userOf } from './actor.ts';
 import type { Db } from './db.ts';
+import { requireKeepable } from './keepable.ts';
 import { refuseCrossSite } from './cross-site.ts';
 import type { Platform } from './platform.ts';
 
@@ -86,6 +87,7 @@ async function actorFor(endpoint: EndpointSpec, db: Db, request: Request) {
 }
 
 function inputOf<E extends EndpointSpec>(endpoint: E, request: Request): InputOf<E> {
+  for (const given of [request.params, request.query, request.body]) requireKeepable(given);
   return {
     params: endpoint.params?.parse(request.params),
     query: endpoint.query?.parse(request.query),

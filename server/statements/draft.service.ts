@@ -1,5 +1,6 @@
 import { and, eq } from 'drizzle-orm';
 import type { z } from 'zod';
+import { canonicalJson } from '#shared/kernel/canonical.ts';
 import { Refusal } from '#shared/kernel/refusal.ts';
 import { parseDocument } from '#shared/statements/document/document.ts';
 import { documentFormat, type NodeJson } from '#shared/statements/document/json.ts';
@@ -59,7 +60,10 @@ async function firstDocument(db: Db, orgId: string, starterId: string | null): P
   return documentFromBlocks(blocks);
 }
 
-/** Saves the draft over the version that it was written over. A stale one is refused with the stored draft, so that nothing is lost. */
+/**
+ * Saves the draft over the version that it was written over. A stale one is refused with the stored draft, so that nothing is lost;
+ * unless it is what is stored already: the answer to an earlier send went missing on the way.
+ */
 export async function saveDraft(
   db: Db,
   actor: UserActor,
@@ -67,7 +71,11 @@ export async function saveDraft(
   { lockVersion, title, document }: z.output<typeof saveDraftBody>,
 ): Promise<{ lockVersion: number; updatedAt: string }> {
   const statement = await lockStatement(db, actor.orgId, id);
-  if (statement.lockVersion !== lockVersion) throw await staleDraft(db, statement);
+  if (statement.lockVersion !== lockVersion) {
+    if (isStored(statement, { title, document }))
+      return { lockVersion: statement.lockVersion, updatedAt: statement.updatedAt.toISOString() };
+    throw await staleDraft(db, statement);
+  }
   requireState(statement, ['draft'], 'Only a draft can be changed. Take it back, or start a new revision.');
   parseDocument(document);
   const updatedAt = new Date();
@@ -84,6 +92,14 @@ export async function saveDraft(
     .where(at(actor.orgId, id));
   return { lockVersion: lockVersion + 1, updatedAt: updatedAt.toISOString() };
 }
+
+const isStored = (
+  stored: StatementRecord,
+  { title, document }: Pick<StatementRecord, 'title' | 'document'>,
+): boolean =>
+  stored.state === 'draft' &&
+  stored.title === title &&
+  canonicalJson(stored.document) === canonicalJson(document);
 
 async function staleDraft(db: Db, statement: StatementRecord): Promise<Refusal> {
   const [writer] = await db
@@ -113,9 +129,16 @@ export function requireState(
     throw new Refusal('conflict', words, { extra: { state: statement.state } });
 }
 
-/** Refuses an act on a statement that was changed since the screen read it. */
-export async function requireFresh(db: Db, statement: StatementRecord, lockVersion: number): Promise<void> {
-  if (statement.lockVersion !== lockVersion) throw await staleDraft(db, statement);
+/** Refuses an act on a statement that was changed since the screen read it. Ask for the state first: its words say more. */
+export function requireFresh({ lockVersion, state }: StatementRecord, seen: number): void {
+  if (lockVersion !== seen)
+    throw new Refusal(
+      'conflict',
+      'This statement was changed since you opened it. Look at it again before you go on.',
+      {
+        extra: { lockVersion, state },
+      },
+    );
 }
 
 type Change = Partial<typeof statements.$inferInsert>;
@@ -135,8 +158,8 @@ export async function submitDraft(
   lockVersion: number,
 ): Promise<Statement> {
   const statement = await lockStatement(db, actor.orgId, id);
-  await requireFresh(db, statement, lockVersion);
   requireState(statement, ['draft'], 'Only a draft can be submitted.');
+  requireFresh(statement, lockVersion);
   return changeState(db, statement, {
     state: 'submitted',
     submittedBy: actor.accountId,
@@ -152,8 +175,8 @@ export async function recallDraft(
   lockVersion: number,
 ): Promise<Statement> {
   const statement = await lockStatement(db, actor.orgId, id);
-  await requireFresh(db, statement, lockVersion);
   requireState(statement, ['submitted'], 'Only a submitted draft can be taken back.');
+  requireFresh(statement, lockVersion);
   return changeState(db, statement, { state: 'draft', submittedBy: null, submittedAt: null });
 }
 
@@ -164,8 +187,8 @@ export async function returnDraft(
   { lockVersion, note }: { lockVersion: number; note: string },
 ): Promise<Statement> {
   const statement = await lockStatement(db, actor.orgId, id);
-  await requireFresh(db, statement, lockVersion);
   requireState(statement, ['submitted'], 'Only a submitted draft can be handed back.');
+  requireFresh(statement, lockVersion);
   return changeState(db, statement, {
     state: 'draft',
     returnNote: note,
@@ -182,8 +205,8 @@ export async function reviseStatement(
   lockVersion: number,
 ): Promise<Statement> {
   const statement = await lockStatement(db, actor.orgId, id);
-  await requireFresh(db, statement, lockVersion);
   requireState(statement, ['issued'], 'A new revision starts from an issued statement.');
+  requireFresh(statement, lockVersion);
   return changeState(db, statement, {
     state: 'draft',
     returnNote: '',

@@ -29,8 +29,8 @@ export async function issueStatement(
   now = new Date(),
 ): Promise<Statement> {
   const statement = await lockStatement(db, actor.orgId, id);
-  await requireFresh(db, statement, lockVersion);
   requireState(statement, ['submitted'], 'Only a submitted draft can be issued.');
+  requireFresh(statement, lockVersion);
   if (statement.submittedBy === actor.accountId)
     throw new Refusal(
       'forbidden',
@@ -154,9 +154,9 @@ export async function withdrawStatement(
   now = new Date(),
 ): Promise<Statement> {
   const statement = await lockStatement(db, actor.orgId, id);
-  await requireFresh(db, statement, lockVersion);
   if (statement.currentRevision === null)
     throw new Refusal('conflict', 'Only a statement in force can be withdrawn.');
+  requireFresh(statement, lockVersion);
   await appendToLedger(db, actor.orgId, {
     kind: 'statement.withdrawn',
     actor: `account:${actor.accountId}`,

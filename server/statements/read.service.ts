@@ -175,7 +175,7 @@ export async function revisionByNumber(db: Db, orgId: string, statementId: strin
 
 /** Answers for a printed copy's hash: the standing, and nothing of the content. */
 export async function verifyHash(db: Db, hash: string) {
-  const [row] = await db
+  const [row, another] = await db
     .select({ revision: revisions, statement: statements })
     .from(revisions)
     .innerJoin(
@@ -183,7 +183,9 @@ export async function verifyHash(db: Db, hash: string) {
       and(eq(statements.orgId, revisions.orgId), eq(statements.id, revisions.statementId)),
     )
     .where(sql`${revisions.hash} >= ${hash} and ${revisions.hash} < ${`${hash}g`}`)
-    .limit(1);
+    .limit(2);
+  if (another)
+    throw new Refusal('conflict', 'More than one revision begins with these digits. Type more of the hash.');
   if (!row) return { standing: 'unknown' as const, number: null, issuedAt: null };
   return {
     standing: standingOfRevision(row.revision, row.statement),

@@ -1,8 +1,9 @@
-import { and, asc, eq } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray } from 'drizzle-orm';
 import QRCode from 'qrcode';
 import { shortHash } from '#shared/kernel/canonical.ts';
 import { Refusal } from '#shared/kernel/refusal.ts';
 import { type Frozen, frozenSchema } from '#shared/statements/frozen.ts';
+import { countsAsCurrent } from '#shared/statements/standing.ts';
 import type { Sheet, SignatureOnSheet } from '#shared/statements/statements.api.ts';
 import type { UserActor } from '../platform/actor.ts';
 import type { Db } from '../platform/db.ts';
@@ -10,7 +11,7 @@ import type { Platform } from '../platform/platform.ts';
 import { signOns } from '../signons/signons.table.ts';
 import { freeze } from './issue.service.ts';
 import { presentRevision, revisionByNumber, type RevisionRecord } from './read.service.ts';
-import { statements } from './statements.table.ts';
+import { revisions, statements } from './statements.table.ts';
 
 /** What was frozen, read back from its canonical form. */
 export const frozenOf = ({ canonical }: Pick<RevisionRecord, 'canonical'>): Frozen =>
@@ -29,7 +30,7 @@ export async function sheetOfRevision(
   return {
     frozen: frozenOf(revision),
     revision: presentRevision(revision, statement),
-    signatures: await signaturesUnder(db, actor.orgId, revision),
+    signatures: await signaturesFor(db, actor.orgId, revision),
     verifyAddress,
     verifyQrSvg: await QRCode.toString(verifyAddress, { type: 'svg', margin: 0, errorCorrectionLevel: 'M' }),
     printedAt: new Date().toISOString(),
@@ -65,23 +66,45 @@ export async function sheetOfDraft(
   };
 }
 
-/** The signatures under one revision, each person's first. */
-async function signaturesUnder(db: Db, orgId: string, { id }: RevisionRecord): Promise<SignatureOnSheet[]> {
+/**
+ * The signatures that count for a revision: those under it, and those under an earlier one that only changes that are not material
+ * have followed. One a person, under the latest revision that they signed; of several under that one, the first.
+ */
+async function signaturesFor(
+  db: Db,
+  orgId: string,
+  { statementId, number }: RevisionRecord,
+): Promise<SignatureOnSheet[]> {
+  const marks = await db
+    .select({ number: revisions.number, material: revisions.material })
+    .from(revisions)
+    .where(and(eq(revisions.orgId, orgId), eq(revisions.statementId, statementId)));
+  const counting = marks.filter((mark) => countsAsCurrent(mark.number, marks, number));
   const rows = await db
-    .select()
+    .selectDistinctOn([signOns.personId])
     .from(signOns)
-    .where(and(eq(signOns.orgId, orgId), eq(signOns.revisionId, id)))
-    .orderBy(asc(signOns.receivedAt));
-  const first = new Map(rows.toReversed().map((row) => [row.personId, row]));
-  return [...first.values()].reverse().map((row) => ({
-    name: row.personName,
-    employer: row.employerName,
-    trade: row.trade,
-    revision: row.revisionNumber,
-    signedAt: row.signedAt.toISOString(),
-    method: row.method,
-    svg: row.svg,
-    typedName: row.typedName,
-    witness: row.witness,
-  }));
+    .where(
+      and(
+        eq(signOns.orgId, orgId),
+        eq(signOns.statementId, statementId),
+        inArray(
+          signOns.revisionNumber,
+          counting.map((mark) => mark.number),
+        ),
+      ),
+    )
+    .orderBy(signOns.personId, desc(signOns.revisionNumber), asc(signOns.receivedAt));
+  return rows
+    .sort((a, b) => a.receivedAt.getTime() - b.receivedAt.getTime())
+    .map((row) => ({
+      name: row.personName,
+      employer: row.employerName,
+      trade: row.trade,
+      revision: row.revisionNumber,
+      signedAt: row.signedAt.toISOString(),
+      method: row.method,
+      svg: row.svg,
+      typedName: row.typedName,
+      witness: row.witness,
+    }));
 }

@@ -1,4 +1,4 @@
-import { and, asc, count, eq, ilike, inArray, isNotNull, isNull } from 'drizzle-orm';
+import { and, asc, count, eq, ilike, inArray, isNotNull, isNull, sql } from 'drizzle-orm';
 import type { z } from 'zod';
 import { Refusal } from '#shared/kernel/refusal.ts';
 import type { Employer, employerBody, Person, personBody, personFilters } from '#shared/people/people.api.ts';
@@ -90,21 +90,18 @@ export async function getPerson(db: Db, orgId: string, id: string): Promise<Pers
   return person;
 }
 
+/** Asked, not joined: two sign-ins tied to one person would show the person twice. */
+const hasSignIn = sql<boolean>`exists (select 1 from ${memberships} where ${memberships.orgId} = ${people.orgId} and ${memberships.personId} = ${people.id})`;
+
 async function presentPeople(db: Db, orgId: string, where: ReturnType<typeof and>): Promise<Person[]> {
   const rows = await db
-    .select({ person: people, employer: employers.name, account: memberships.accountId })
+    .select({ person: people, employer: employers.name, signIn: hasSignIn })
     .from(people)
     .innerJoin(employers, and(eq(employers.orgId, people.orgId), eq(employers.id, people.employerId)))
-    .leftJoin(memberships, and(eq(memberships.orgId, people.orgId), eq(memberships.personId, people.id)))
     .where(where)
     .orderBy(asc(people.name));
-  const crews = await db
-    .select({ personId: crewMembers.personId, id: sites.id, name: sites.name })
-    .from(crewMembers)
-    .innerJoin(sites, and(eq(sites.orgId, crewMembers.orgId), eq(sites.id, crewMembers.siteId)))
-    .where(and(eq(crewMembers.orgId, orgId), isNull(sites.archivedAt)))
-    .orderBy(asc(sites.name));
-  return rows.map(({ person, employer, account }) => ({
+  const sitesOf = await openSitesOf(db, orgId, where);
+  return rows.map(({ person, employer, signIn }) => ({
     id: person.id,
     name: person.name,
     employerId: person.employerId,
@@ -113,10 +110,24 @@ async function presentPeople(db: Db, orgId: string, where: ReturnType<typeof and
     inductionCard: person.inductionCard,
     language: person.language as Person['language'],
     employer,
-    sites: crews.filter(({ personId }) => personId === person.id).map(({ id, name }) => ({ id, name })),
-    signIn: account !== null,
+    sites: sitesOf.get(person.id) ?? [],
+    signIn,
     archivedAt: person.archivedAt?.toISOString() ?? null,
   }));
+}
+
+/** The open sites on whose crew each of these people is. */
+async function openSitesOf(db: Db, orgId: string, where: ReturnType<typeof and>) {
+  const rows = await db
+    .select({ personId: crewMembers.personId, id: sites.id, name: sites.name })
+    .from(crewMembers)
+    .innerJoin(sites, and(eq(sites.orgId, crewMembers.orgId), eq(sites.id, crewMembers.siteId)))
+    .innerJoin(people, and(eq(people.orgId, crewMembers.orgId), eq(people.id, crewMembers.personId)))
+    .where(and(eq(crewMembers.orgId, orgId), isNull(sites.archivedAt), where))
+    .orderBy(asc(sites.name));
+  const byPerson = new Map<string, Person['sites']>();
+  for (const { personId, ...site } of rows) byPerson.set(personId, [...(byPerson.get(personId) ?? []), site]);
+  return byPerson;
 }
 
 export async function savePerson(
@@ -135,7 +146,9 @@ export async function savePerson(
 
 /** Takes a person off the lists or brings one back. Their records stay; their phones are no longer recognised. */
 export async function archivePerson(db: Db, orgId: string, id: string, archived: boolean): Promise<Person> {
-  await getPerson(db, orgId, id);
+  const person = await getPerson(db, orgId, id);
+  // Said twice, it keeps the day on which it was first said.
+  if (archived === (person.archivedAt !== null)) return person;
   const now = new Date();
   await db
     .update(people)

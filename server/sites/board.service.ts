@@ -1,4 +1,4 @@
-import { and, eq, isNull, ne } from 'drizzle-orm';
+import { and, eq, isNull } from 'drizzle-orm';
 import type { BoardPart } from '#shared/sites/sites.api.ts';
 import { latestSignOns, standingOf, statementsInForce } from '../signons/standing.service.ts';
 import type { Db } from '../platform/db.ts';
@@ -43,16 +43,21 @@ async function signOnParts(db: Db, orgId: string, siteId: string, crew: string[]
       { key: 'signOn', words: 'no statement in force', well: false, link: `/statements?siteId=${siteId}` },
     ];
   }
+  if (crew.length === 0)
+    return [{ key: 'signOn', words: 'nobody on the crew yet', well: false, link: `/sites/${siteId}` }];
   const signed = await latestSignOns(db, orgId, { siteId });
   return inForce.map((statement) => {
-    const current = crew.filter((personId) => standingOf(statement, signed, personId) === 'current').length;
+    const standings = crew.map((personId) => standingOf(statement, signed, personId));
+    const current = standings.filter((standing) => standing === 'current').length;
     const well = current === crew.length;
+    // The register shows one standing at a time: those who never signed first, then those who signed an older revision.
+    const behind = standings.includes('none') ? 'none' : 'older';
     const name = inForce.length > 1 ? `${statement.title}: ` : '';
     return {
       key: 'signOn',
       words: `${name}${current} of ${crew.length} signed on, rev ${statement.current}`,
       well,
-      link: `/register?siteId=${siteId}&statementId=${statement.statementId}${well ? '' : '&status=none'}`,
+      link: `/register?siteId=${siteId}&statementId=${statement.statementId}${well ? '' : `&status=${behind}`}`,
     };
   });
 }
@@ -80,12 +85,7 @@ async function talkParts(db: Db, orgId: string, siteId: string, today: string): 
 async function draftParts(db: Db, orgId: string, siteId: string): Promise<BoardPart[]> {
   const waiting = await db.$count(
     statements,
-    and(
-      eq(statements.orgId, orgId),
-      eq(statements.siteId, siteId),
-      eq(statements.state, 'submitted'),
-      ne(statements.state, 'withdrawn'),
-    ),
+    and(eq(statements.orgId, orgId), eq(statements.siteId, siteId), eq(statements.state, 'submitted')),
   );
   if (waiting === 0) return [];
   const words =

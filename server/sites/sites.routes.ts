@@ -1,5 +1,6 @@
 import QRCode from 'qrcode';
 import * as api from '#shared/sites/sites.api.ts';
+import { Refusal } from '#shared/kernel/refusal.ts';
 import { listPeople } from '../people/people.service.ts';
 import type { Feature } from '../platform/features.ts';
 import { mount } from '../platform/mount.ts';
@@ -30,6 +31,7 @@ export const siteRoutes: Feature = (router, platform) => {
   // A read that may make today's code: it runs on the database itself, not in a transaction.
   mount(router, platform, api.getSignAccess, async ({ db, actor, params }) => {
     const site = await sites.getSite(db, actor.orgId, params.id);
+    if (site.archivedAt) throw new Refusal('conflict', 'This site is closed: nobody can sign on there.');
     const day = sites.todayAt(site);
     const address = `${platform.publicUrl()}/s/${site.signToken}`;
     return {

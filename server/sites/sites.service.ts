@@ -78,7 +78,8 @@ export async function saveSite(
 }
 
 export async function archiveSite(db: Db, orgId: string, id: string, archived: boolean): Promise<Site> {
-  await getSite(db, orgId, id);
+  const site = await getSite(db, orgId, id);
+  if (archived === (site.archivedAt !== null)) return site;
   await db
     .update(sites)
     .set({ archivedAt: archived ? new Date() : null })

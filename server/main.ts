@@ -3,6 +3,8 @@ import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { isOrganisationThere, seedDemo } from './commands/seed.ts';
 import { demoSignIns } from './commands/demo-sign-ins.ts';
+import { addShippedBlocksToAll } from './library/library.service.ts';
+import { checkTemplates } from './library/templates.ts';
 import { BadConfig, readConfig } from './platform/config.ts';
 import { DataFolderInUse } from './platform/data-lock.ts';
 import { servePagesInDevelopment } from './platform/development.ts';
@@ -19,7 +21,9 @@ try {
     migrations: join(root, 'server/platform/migrations'),
     pages: config.production ? join(root, 'dist/client') : null,
     prepare: async (platform) => {
-      if (await isOrganisationThere(platform.database.db)) return;
+      checkTemplates();
+      const { db } = platform.database;
+      if (await isOrganisationThere(db)) return addShippedBlocksToAll(db);
       console.log('Seeding the demo organisation…');
       await seedDemo(platform);
     },

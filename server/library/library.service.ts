@@ -2,6 +2,7 @@ import { and, desc, eq } from 'drizzle-orm';
 import { type Block, hazardCategoryNames } from '#shared/library/block.ts';
 import type { BlockSummary } from '#shared/library/library.api.ts';
 import { Refusal } from '#shared/kernel/refusal.ts';
+import { organisations } from '../account/account.table.ts';
 import type { Db } from '../platform/db.ts';
 import { blocks } from './library.table.ts';
 import { blockTemplates } from './templates.ts';
@@ -15,6 +16,12 @@ export async function addShippedBlocks(db: Db, orgId: string): Promise<void> {
     body: block,
   }));
   if (values.length > 0) await db.insert(blocks).values(values).onConflictDoNothing();
+}
+
+/** Brings every organisation's library up to the blocks that this version ships; what is there already is left as it is. */
+export async function addShippedBlocksToAll(db: Db): Promise<void> {
+  for (const { id } of await db.select({ id: organisations.id }).from(organisations))
+    await addShippedBlocks(db, id);
 }
 
 /** The newest version of every block. */

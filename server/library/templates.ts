@@ -39,6 +39,11 @@ export const declarations = once(() => readAll('declarations', declarationFileSc
 export const matrices = once((): Matrix[] => readAll('matrices', matrixSchema));
 const profiles = once((): Profile[] => readAll('profiles', profileSchema));
 
+/** Reads all of them, so that one that does not fit stops the start and not the person who comes upon it. */
+export function checkTemplates(): void {
+  for (const read of [blockTemplates, starters, declarations, matrices, profiles]) read();
+}
+
 export function profileOf(id: string): Profile {
   const profile = profiles().find((candidate) => candidate.id === id);
   if (!profile) throw new Error(`There is no profile "${id}".`);

@@ -26,7 +26,7 @@ export type ReadinessContext = { profile: Profile; matrix: Matrix };
 /** What is missing or weak in a draft, each with its place. An issue is refused while `blocks(gap)` holds for one. */
 export function gapsBeforeIssue(outline: Outline, context: ReadinessContext): Gap[] {
   return [
-    ...particularGaps(outline),
+    ...particularGaps(outline, context.profile),
     ...stepGaps(outline),
     ...outline.steps.flatMap((step) =>
       step.hazards.flatMap((hazard) => hazardGaps(step, hazard, context.matrix)),
@@ -49,7 +49,10 @@ function withClause(gap: Draft, profile: Profile): Gap {
 const onTitleBlock = (field: string): GapPlace => ({ kind: 'titleBlock', field });
 const at = (id: string): GapPlace => ({ kind: 'node', id });
 
-function particularGaps({ particulars }: Outline): Draft[] {
+function particularGaps({ particulars: written }: Outline, profile: Profile): Draft[] {
+  // A letter that the profile does not know names no high risk work.
+  const known = written.highRisk?.filter((key) => profile.highRisk.some((work) => work.key === key)) ?? [];
+  const particulars = { ...written, highRisk: known };
   const gaps: Draft[] = [];
   const need = (field: keyof typeof particulars, words: string, severity?: GapSeverity) => {
     const value = particulars[field];

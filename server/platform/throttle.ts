@@ -18,6 +18,8 @@ export type Throttles = {
   spend: (name: LimitName, key: string) => Promise<void>;
   /** Forgets the tries, after one that was right. */
   forgive: (name: LimitName, key: string) => Promise<void>;
+  /** Takes back one try that was right, and leaves other people's wrong ones counted. */
+  giveBack: (name: LimitName, key: string) => Promise<void>;
 };
 
 export function createThrottles(pool: Pool): Throttles {
@@ -52,6 +54,9 @@ export function createThrottles(pool: Pool): Throttles {
     },
     async forgive(name, key) {
       await limiter(name).delete(key);
+    },
+    async giveBack(name, key) {
+      await limiter(name).reward(key);
     },
   };
 }

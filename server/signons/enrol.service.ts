@@ -13,6 +13,7 @@ import type { Throttles } from '../platform/throttle.ts';
 import { dayCodeFor, isOnCrew, putOnCrew, siteByToken, todayAt } from '../sites/sites.service.ts';
 import type { sites } from '../sites/sites.table.ts';
 import { collectionNotice } from './declarations.ts';
+import { nameBegins } from './names.ts';
 import { devices } from './signons.table.ts';
 
 type SiteRow = typeof sites.$inferSelect;
@@ -50,8 +51,9 @@ export async function requireDayCode(
   throttles: Throttles,
   { site, code, address }: { site: SiteRow; code: string; address: string },
 ): Promise<void> {
-  await throttles.spend('dayCodeSite', site.id);
+  // The address first: one that is held up already must not use up the whole site's tries.
   await throttles.spend('dayCode', `${site.id}:${address}`);
+  await throttles.spend('dayCodeSite', site.id);
   const right = await dayCodeFor(db, site.orgId, site.id, todayAt(site));
   if (!timingSafeEqual(Buffer.from(right), Buffer.from(code)))
     throw new Refusal(
@@ -62,21 +64,18 @@ export async function requireDayCode(
       },
     );
   await throttles.forgive('dayCode', `${site.id}:${address}`);
+  await throttles.giveBack('dayCodeSite', site.id);
 }
 
 /** People whose names begin as written, word by word; at most five, and only after the day code. */
 export async function findPeople(db: Db, orgId: string, written: string) {
-  const words = normal(written).split(' ').filter(Boolean);
   const rows = await db
     .select({ id: people.id, name: people.name, employer: employers.name })
     .from(people)
     .innerJoin(employers, and(eq(employers.orgId, people.orgId), eq(employers.id, people.employerId)))
     .where(and(eq(people.orgId, orgId), isNull(people.archivedAt)))
     .orderBy(asc(people.name));
-  const found = rows.filter(({ name }) => {
-    const parts = normal(name).split(' ');
-    return words.every((word) => parts.some((part) => part.startsWith(word)));
-  });
+  const found = rows.filter(({ name }) => nameBegins(name, written));
   const choices = await db
     .select({ id: employers.id, name: employers.name })
     .from(employers)
@@ -84,17 +83,6 @@ export async function findPeople(db: Db, orgId: string, written: string) {
     .orderBy(asc(employers.name));
   return { people: found.slice(0, 5), employers: choices };
 }
-
-/** Lower case without accents, so that "nguyen" finds "Nguyễn". */
-const normal = (text: string): string =>
-  text
-    .normalize('NFD')
-    .replace(/\p{Diacritic}/gu, '')
-    .replaceAll('đ', 'd')
-    .replaceAll('Đ', 'D')
-    .toLowerCase()
-    .trim()
-    .replace(/\s+/g, ' ');
 
 type Enrolment = z.output<typeof enrolBody>;
 

@@ -1,4 +1,5 @@
 import { and, desc, eq } from 'drizzle-orm';
+import { Refusal } from '#shared/kernel/refusal.ts';
 import { crewCardsOf } from '#shared/signons/cards.ts';
 import { checkQuestionsOf } from '#shared/signons/questions.ts';
 import type { Reading, ToSign } from '#shared/signons/signons.api.ts';
@@ -75,9 +76,16 @@ async function openTalks(db: Db, orgId: string, siteId: string, personId: string
   }));
 }
 
-/** A revision as crew cards, with its questions and the words to be signed. */
-export async function readingOf(db: Db, orgId: string, revisionId: string): Promise<Reading> {
+/** A revision as crew cards, with its questions and the words to be signed; where a site is given, only of that site. */
+export async function readingOf(
+  db: Db,
+  orgId: string,
+  revisionId: string,
+  { siteId }: { siteId?: string } = {},
+): Promise<Reading> {
   const { revision, statement } = await revisionById(db, orgId, revisionId);
+  if (siteId && revision.siteId !== siteId)
+    throw new Refusal('missing', 'This statement is not for this site.');
   const frozen = frozenOf(revision);
   const { particulars, steps } = frozen.outline;
   return {

@@ -73,8 +73,8 @@ export const signOnRoutes: Feature = (router, platform) => {
     return toSignAt(db, actor.orgId, siteId, actor.personId);
   });
   mount(router, platform, api.getOwnReading, async ({ db, actor, params }) => {
-    await siteOfDevice(db, actor, params.token);
-    return readingOf(db, actor.orgId, params.revisionId);
+    const siteId = await siteOfDevice(db, actor, params.token);
+    return readingOf(db, actor.orgId, params.revisionId, { siteId });
   });
   mount(router, platform, api.signOn, async ({ db, actor, params, body, request }) => {
     const siteId = await siteOfDevice(db, actor, params.token);

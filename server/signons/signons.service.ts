@@ -2,6 +2,7 @@ import { and, eq, sql } from 'drizzle-orm';
 import type { z } from 'zod';
 import { formatDay } from '#shared/kernel/work-date.ts';
 import { Refusal } from '#shared/kernel/refusal.ts';
+import type { Person } from '#shared/people/people.api.ts';
 import { inkOf, leastInk, type Signature, signatureSvg } from '#shared/signons/signature.ts';
 import type { attendanceBody, Declaration, SignOnBody } from '#shared/signons/signons.api.ts';
 import { appendToLedger } from '../ledger/ledger.service.ts';
@@ -10,6 +11,7 @@ import { getPerson } from '../people/people.service.ts';
 import type { Db } from '../platform/db.ts';
 import { putOnCrew } from '../sites/sites.service.ts';
 import { revisionById, standingOfRevision } from '../statements/read.service.ts';
+import { revisions, statements } from '../statements/statements.table.ts';
 import { attendances, talks } from '../talks/talks.table.ts';
 import { requireDeclaration, statementDeclaration, talkDeclaration } from './declarations.ts';
 import { organisationOf } from './enrol.service.ts';
@@ -27,6 +29,7 @@ export type Signing = {
 
 /** Keeps a signature under a revision, exactly once: a resend of the same id answers as the first did. */
 export async function signOn(db: Db, signing: Signing, id: string, body: SignOnBody, now = new Date()) {
+  await holdStatement(db, signing.orgId, body.revisionId);
   const { revision, statement } = await revisionById(db, signing.orgId, body.revisionId);
   const superseded = standingOfRevision(revision, statement) !== 'current';
   const known = await signOnReceived(db, signing, id, body.revisionId);
@@ -46,8 +49,9 @@ export async function signOn(db: Db, signing: Signing, id: string, body: SignOnB
       revision: String(revision.number),
     }),
   );
+  const person = await getPerson(db, signing.orgId, signing.personId);
   const row = {
-    ...(await signatureRow(db, signing, { ...body, declaration }, now)),
+    ...signatureRow(signing, person, { ...body, declaration }, now),
     id,
     siteId: signing.siteId,
     statementId: revision.statementId,
@@ -57,7 +61,7 @@ export async function signOn(db: Db, signing: Signing, id: string, body: SignOnB
     readingMs: body.readingMs,
     answers: body.answers,
   };
-  await putOnCrew(db, signing.orgId, signing.siteId, signing.personId);
+  await joinCrew(db, signing, person);
   const entry = await appendToLedger(db, signing.orgId, {
     kind: 'signOn',
     actor: `person:${signing.personId}`,
@@ -81,6 +85,22 @@ async function signOnReceived(db: Db, { orgId, personId }: Signing, id: string, 
   return known;
 }
 
+/**
+ * Nobody issues or withdraws the statement until this sign-on is kept, so that the receipt tells the truth. Taken before the ledger's
+ * head, in the order of whoever issues: the other way round each would wait for the other.
+ */
+async function holdStatement(db: Db, orgId: string, revisionId: string): Promise<void> {
+  await db
+    .select({ id: statements.id })
+    .from(statements)
+    .innerJoin(
+      revisions,
+      and(eq(revisions.orgId, statements.orgId), eq(revisions.statementId, statements.id)),
+    )
+    .where(and(eq(statements.orgId, orgId), eq(revisions.id, revisionId)))
+    .for('share', { of: statements });
+}
+
 /** Two copies of one resend at the same moment wait for each other here. */
 async function lockId(db: Db, id: string): Promise<void> {
   await db.execute(sql`select pg_advisory_xact_lock(hashtextextended(${id}, 0))`);
@@ -89,13 +109,12 @@ async function lockId(db: Db, id: string): Promise<void> {
 type Shown = { signature: Signature; signedAt: string; language: string; declaration: Declaration };
 
 /** The part of the row that any signature has. */
-async function signatureRow(
-  db: Db,
+function signatureRow(
   { orgId, personId, by, userAgent }: Signing,
+  person: Person,
   { signature, signedAt, language, declaration }: Shown,
   now: Date,
 ) {
-  const person = await getPerson(db, orgId, personId);
   if (signature.method === 'drawn' && inkOf(signature.drawn) < leastInk)
     throw new Refusal('invalid', 'There is too little in the box to be a signature. Sign again.', {
       fields: { 'signature.drawn': 'Sign with your name or your usual mark.' },
@@ -123,6 +142,11 @@ async function signatureRow(
     trade: person.trade,
     inductionCard: person.inductionCard,
   };
+}
+
+/** Whoever signs is on the crew; a late signature of somebody taken off the lists is kept, and does not bring them back. */
+async function joinCrew(db: Db, { orgId, siteId, personId }: Signing, { archivedAt }: Person): Promise<void> {
+  if (!archivedAt) await putOnCrew(db, orgId, siteId, personId);
 }
 
 /** Keeps a signature under a talk, once a person. */
@@ -158,8 +182,9 @@ export async function attend(
     body.declaration,
     talkDeclaration(organisation.profileId, { topic: talk.topic, date: formatDay(talk.date) }),
   );
-  const row = { ...(await signatureRow(db, signing, { ...body, declaration }, now)), id, talkId: talk.id };
-  await putOnCrew(db, signing.orgId, signing.siteId, signing.personId);
+  const person = await getPerson(db, signing.orgId, signing.personId);
+  const row = { ...signatureRow(signing, person, { ...body, declaration }, now), id, talkId: talk.id };
+  await joinCrew(db, signing, person);
   const entry = await appendToLedger(db, signing.orgId, {
     kind: 'talk.attended',
     actor: `person:${signing.personId}`,

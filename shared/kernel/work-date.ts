@@ -4,8 +4,16 @@ import { z } from 'zod';
 export const workDate = z.iso.date('Use a date like 2026-12-01.');
 /** A wall-clock time at a site, `HH:MM`. */
 export const wallTime = z.iso.time({ precision: -1, message: 'Use a time like 06:45.' });
-/** A moment, ISO 8601 with offset, as the wire carries it. */
-export const instant = z.iso.datetime({ offset: true });
+const [firstInstant, lastInstant] = [0, Date.UTC(9999, 11, 31, 23, 59, 59, 999)];
+
+/**
+ * A moment, ISO 8601 with offset, as the wire carries it, from 1970 to 9999: no working clock is earlier, and the years before 100 come
+ * back from the database as others, which would make a record look altered.
+ */
+export const instant = z.iso.datetime({ offset: true }).refine((at) => {
+  const moment = Date.parse(at);
+  return moment >= firstInstant && moment <= lastInstant;
+}, 'This clock shows a year that can’t be kept. Set the clock of this device and try again.');
 
 /** The calendar day of an instant in a time zone (IANA name). */
 export function workDateOf(at: Date, timeZone: string): string {

@@ -141,7 +141,7 @@ test('the cookie of an enrolled phone is out of reach of scripts and of other si
   expect(line).toMatch(/; SameSite=Lax/);
 });
 
-test('a phone that shows another version of the notice than the one in force is refused, and nobody is added', async () => {
+test('a phone that shows another version of the notice than the one in force is refused, and nobody is added (law.md T25)', async () => {
   const id = newId();
   const { employers } = await supervisor.call(listEmployers, {});
   const call = world.client().call(api.enrol, {
@@ -161,7 +161,7 @@ test('a phone that shows another version of the notice than the one in force is 
   expect((await supervisor.call(listPeople, {})).people.map((person) => person.id)).not.toContain(id);
 });
 
-test('a phone that names no notice at all is refused', async () => {
+test('a phone that names no notice at all is refused (law.md T25)', async () => {
   const response = await world.client().fetch(`/api/sign/${wattle.token}/enrol`, {
     method: 'POST',
     body: JSON.stringify({

@@ -59,7 +59,7 @@ test('after a revision that changes nothing that matters, earlier signatures sti
   expect(await statusOf('asha')).toBe('none');
 });
 
-test('after a material revision earlier signatures show as of an older one, and the crew has to sign again', async () => {
+test('after a material revision earlier signatures show as of an older one, and the crew has to sign again (law.md T15)', async () => {
   await issueNextRevision({ supervisor, officer }, { material: true, changeNote: 'Another crane' });
 
   expect(await toSign()).toMatchObject({ number: 3, standing: 'older', changeNote: 'Another crane' });

@@ -231,7 +231,7 @@ test.each([
     true,
   ],
 ])(
-  'a talk with attendance and %s is saved; it counts as consultation: %s',
+  'a talk with attendance and %s is saved; it counts as consultation: %s (law.md T24)',
   async (_case, changes, consultation) => {
     const id = newId();
     await save(id, 0, { ...changes, topic: `Consulted ${id}` });
@@ -315,6 +315,25 @@ test('a worker can’t read the register of talks or write a talk', async () => 
   await expect(
     worker.call(api.saveTalk, { params: { id: newId() }, body: { ...bodyOf(), lockVersion: 0 } }),
   ).rejects.toMatchObject({ code: 'forbidden' });
+});
+
+test('a worker who is signed in signs a talk for themselves, and not for somebody else', async () => {
+  const [id, worker] = [newId(), await world.as('worker')];
+  await save(id);
+  const signFor = (who: string) =>
+    worker.call(sign.attendFor, {
+      params: { id: site('wattle'), personId: person(who), attendanceId: newId() },
+      body: attendanceOf(id),
+    });
+
+  await expect(signFor('bree')).rejects.toMatchObject({ code: 'forbidden' });
+  await signFor('minh');
+  await attend(id, 'kit');
+
+  expect((await get(id)).attendance).toMatchObject([
+    { name: 'Tran Van Minh', handedRoundBy: null },
+    { name: 'Kit Marlowe-Hale', handedRoundBy: 'Sina Vakalahi' },
+  ]);
 });
 
 test('after everything the ledger holds', async () => {

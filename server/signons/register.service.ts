@@ -1,4 +1,4 @@
-import { and, eq, isNull } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import type { z } from 'zod';
 import { formatInstant } from '#shared/kernel/work-date.ts';
 import { Refusal } from '#shared/kernel/refusal.ts';
@@ -15,6 +15,7 @@ import type { Db } from '../platform/db.ts';
 import { crewMembers, sites } from '../sites/sites.table.ts';
 import { revisionById, standingOfRevision } from '../statements/read.service.ts';
 import { frozenOf } from '../statements/sheet.service.ts';
+import { nameHolds } from './names.ts';
 import { signOns } from './signons.table.ts';
 import {
   type InForce,
@@ -26,26 +27,22 @@ import {
 
 type Query = z.output<typeof registerQuery>;
 type Member = {
-  siteId: string;
   personId: string;
   name: string;
-  employerId: string;
-  employer: string;
   trade: string;
+  employer: string;
+  /** Sites whose crew the person is on; none for somebody taken off the lists. */
+  onCrewOf: Set<string>;
 };
 
 /** Per statement in force: everybody of the site's crew, and whoever signed without being on it. */
 export async function registerRows(db: Db, orgId: string, query: Query) {
   const inForce = await statementsInForce(db, orgId, query);
   const signed = await latestSignOns(db, orgId, query);
-  const members = await everybody(db, orgId);
-  const all = inForce.flatMap((statement) => rowsOf(statement, signed, members));
-  const scope = all.filter(
-    (row) =>
-      (!query.employerId ||
-        members.find(({ personId }) => personId === row.personId)?.employerId === query.employerId) &&
-      (!query.search || row.name.toLowerCase().includes(query.search.toLowerCase())),
-  );
+  const members = await everybody(db, orgId, query.employerId);
+  const scope = inForce
+    .flatMap((statement) => rowsOf(statement, signed, members))
+    .filter(({ name }) => !query.search || nameHolds(name, query.search));
   const counts = { current: 0, older: 0, none: 0 };
   for (const { status } of scope) counts[status] += 1;
   const rows = scope
@@ -54,77 +51,68 @@ export async function registerRows(db: Db, orgId: string, query: Query) {
   return { rows, counts };
 }
 
-async function everybody(db: Db, orgId: string): Promise<(Member & { onCrewOf: string[] })[]> {
+async function everybody(db: Db, orgId: string, employerId: string | undefined): Promise<Member[]> {
   const rows = await db
     .select({
       personId: people.id,
       name: people.name,
       trade: people.trade,
-      employerId: people.employerId,
       employer: employers.name,
+      archivedAt: people.archivedAt,
     })
     .from(people)
     .innerJoin(employers, and(eq(employers.orgId, people.orgId), eq(employers.id, people.employerId)))
-    .where(eq(people.orgId, orgId));
+    .where(and(eq(people.orgId, orgId), employerId ? eq(people.employerId, employerId) : undefined));
   const crews = await db
     .select({ siteId: crewMembers.siteId, personId: crewMembers.personId })
     .from(crewMembers)
-    .innerJoin(
-      people,
-      and(
-        eq(people.orgId, crewMembers.orgId),
-        eq(people.id, crewMembers.personId),
-        isNull(people.archivedAt),
-      ),
-    )
     .where(eq(crewMembers.orgId, orgId));
-  return rows.map((row) => ({
-    ...row,
-    siteId: '',
-    onCrewOf: crews.filter(({ personId }) => personId === row.personId).map(({ siteId }) => siteId),
-  }));
+  const members = new Map(rows.map((row) => [row.personId, { ...row, onCrewOf: new Set<string>() }]));
+  for (const { siteId, personId } of crews) {
+    const member = members.get(personId);
+    if (member && !member.archivedAt) member.onCrewOf.add(siteId);
+  }
+  return [...members.values()];
 }
 
-function rowsOf(
-  statement: InForce,
-  signed: LatestSignOn[],
-  members: (Member & { onCrewOf: string[] })[],
-): RegisterRow[] {
-  const own = signed.filter(({ statementId }) => statementId === statement.statementId);
+function rowsOf(statement: InForce, signed: LatestSignOn[], members: Member[]): RegisterRow[] {
+  const own = new Map(
+    signed
+      .filter(({ statementId }) => statementId === statement.statementId)
+      .map((signOn) => [signOn.personId, signOn]),
+  );
   return members
-    .filter(
-      ({ personId, onCrewOf }) =>
-        onCrewOf.includes(statement.siteId) || own.some((signOn) => signOn.personId === personId),
-    )
-    .map((member) => {
-      const signOn = own.find(({ personId }) => personId === member.personId);
-      return {
-        statementId: statement.statementId,
-        statement: statement.title,
-        siteId: statement.siteId,
-        site: statement.site,
-        timeZone: statement.timeZone,
-        currentRevision: statement.current,
-        personId: member.personId,
-        // As they stood when they signed, where they did.
-        name: signOn?.personName ?? member.name,
-        employer: signOn?.employerName ?? member.employer,
-        trade: signOn?.trade ?? member.trade,
-        onCrew: member.onCrewOf.includes(statement.siteId),
-        status: standingOf(statement, own, member.personId),
-        signOn: signOn
-          ? {
-              id: signOn.id,
-              revision: signOn.revisionNumber,
-              signedAt: signOn.signedAt.toISOString(),
-              receivedAt: signOn.receivedAt.toISOString(),
-              method: signOn.method,
-              handedRoundBy: signOn.handedRoundByName,
-              readingMs: signOn.readingMs,
-            }
-          : null,
-      };
-    });
+    .filter(({ personId, onCrewOf }) => onCrewOf.has(statement.siteId) || own.has(personId))
+    .map((member) => rowOf(statement, member, own.get(member.personId)));
+}
+
+function rowOf(statement: InForce, member: Member, signOn: LatestSignOn | undefined): RegisterRow {
+  return {
+    statementId: statement.statementId,
+    statement: statement.title,
+    siteId: statement.siteId,
+    site: statement.site,
+    timeZone: statement.timeZone,
+    currentRevision: statement.current,
+    personId: member.personId,
+    // As they stood when they signed, where they did.
+    name: signOn?.personName ?? member.name,
+    employer: signOn?.employerName ?? member.employer,
+    trade: signOn?.trade ?? member.trade,
+    onCrew: member.onCrewOf.has(statement.siteId),
+    status: standingOf(statement, signOn ? [signOn] : [], member.personId),
+    signOn: signOn
+      ? {
+          id: signOn.id,
+          revision: signOn.revisionNumber,
+          signedAt: signOn.signedAt.toISOString(),
+          receivedAt: signOn.receivedAt.toISOString(),
+          method: signOn.method,
+          handedRoundBy: signOn.handedRoundByName,
+          readingMs: signOn.readingMs,
+        }
+      : null,
+  };
 }
 
 const statusOrder = { none: 0, older: 1, current: 2 };

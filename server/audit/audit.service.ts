@@ -1,6 +1,6 @@
 import { and, asc, eq, gte, isNull, max } from 'drizzle-orm';
 import type { Exception } from '#shared/audit/audit.api.ts';
-import { type AuditFacts, exceptionsOf } from '#shared/audit/exceptions.ts';
+import { type AuditFacts, earliestMissedTalk, exceptionsOf } from '#shared/audit/exceptions.ts';
 import { workDateOf } from '#shared/kernel/work-date.ts';
 import { accounts, memberships, organisations } from '../account/account.table.ts';
 import { ledgerHeads } from '../ledger/ledger.table.ts';
@@ -14,7 +14,6 @@ import { listStatements } from '../statements/read.service.ts';
 import { crewOf, listTalks } from '../talks/talks.service.ts';
 import { attendances, talks } from '../talks/talks.table.ts';
 
-const talkDays = 30;
 const reviewDays = 30;
 const day = 24 * 60 * 60 * 1000;
 
@@ -22,10 +21,11 @@ type Filters = { siteId?: string | undefined; kind?: Exception['kind'] | undefin
 
 /** Exceptions across all sites, counted before the kind is chosen. */
 export async function listExceptions(db: Db, orgId: string, { siteId, kind }: Filters, now = new Date()) {
-  const all = exceptionsOf({
+  const facts = {
     statements: await statementFacts(db, orgId, siteId),
     talks: await talkFacts(db, orgId, siteId, now),
-  });
+  };
+  const all = exceptionsOf(facts, now);
   const counts = { notSigned: 0, signedOlder: 0, readTooFast: 0, talkMissed: 0 };
   for (const exception of all) counts[exception.kind] += 1;
   const [head] = await db.select().from(ledgerHeads).where(eq(ledgerHeads.orgId, orgId));
@@ -100,7 +100,7 @@ async function talkFacts(
         eq(talks.orgId, orgId),
         eq(talks.state, 'closed'),
         isNull(sites.archivedAt),
-        gte(talks.closedAt, new Date(now.getTime() - talkDays * day)),
+        gte(talks.closedAt, earliestMissedTalk(now)),
         siteId ? eq(talks.siteId, siteId) : undefined,
       ),
     );

@@ -18,7 +18,7 @@ export type AuditFacts = {
     /** Each person's sign-on under the highest revision that they signed. */
     signOns: { id: string; personId: string; revision: number; signedAt: string; readingMs: number }[];
   })[];
-  /** Closed talks of the last while, with who was expected and who was there. */
+  /** Closed talks, with who was expected and who was there. */
   talks: (Where & {
     talkId: string;
     topic: string;
@@ -29,9 +29,19 @@ export type AuditFacts = {
   })[];
 };
 
+/** Days that a missed talk is shown after it was closed. */
+const missedTalkDays = 30;
+
+/** The earliest closing of a talk whose missing people are still shown. */
+export const earliestMissedTalk = (now: Date): Date => new Date(now.getTime() - missedTalkDays * 86_400_000);
+
 /** Everything that a safety officer should look at first, each with its evidence. Pure: facts in, list out. */
-export function exceptionsOf({ statements, talks }: AuditFacts): Exception[] {
-  return [...statements.flatMap(ofStatement), ...talks.flatMap(ofTalk)];
+export function exceptionsOf({ statements, talks }: AuditFacts, now: Date): Exception[] {
+  const since = earliestMissedTalk(now).toISOString();
+  return [
+    ...statements.flatMap(ofStatement),
+    ...talks.filter(({ closedAt }) => closedAt >= since).flatMap(ofTalk),
+  ];
 }
 
 function ofStatement(statement: AuditFacts['statements'][number]): Exception[] {

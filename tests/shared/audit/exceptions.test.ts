@@ -5,6 +5,7 @@ const where = { siteId: 'site', site: 'Lot 7', timeZone: 'Australia/Adelaide' };
 const bree = { personId: 'bree', person: 'Bree Ashcombe', employer: 'Ridgeline' };
 const kit = { personId: 'kit', person: 'Kit Marlowe-Hale', employer: 'Ridgeline' };
 const at = '2026-03-02T20:00:00.000Z';
+const now = new Date('2026-03-03T00:00:00.000Z');
 
 type Statement = AuditFacts['statements'][number];
 const statementOf = (changes: Partial<Statement>): Statement => ({
@@ -27,7 +28,7 @@ const signedBy = (personId: string, changes: Partial<Statement['signOns'][number
   ...changes,
 });
 const ofStatement = (changes: Partial<Statement>) =>
-  exceptionsOf({ statements: [statementOf(changes)], talks: [] });
+  exceptionsOf({ statements: [statementOf(changes)], talks: [] }, now);
 
 test('somebody of the crew who has not signed is shown with the register as evidence', () => {
   expect(ofStatement({})).toEqual([
@@ -104,13 +105,13 @@ test('whoever signed but is not on the crew is nobody’s exception', () => {
   expect(ofStatement({ crew: [], signOns: [signedBy('bree', { readingMs: 0 })] })).toEqual([]);
 });
 
-test('whoever was expected at a talk and was not there is shown, with the talk as evidence', () => {
-  const talk = { ...where, talkId: 'talk', topic: 'The wind number', date: '2026-03-02', closedAt: at };
+const talk = { ...where, talkId: 'talk', topic: 'The wind number', date: '2026-03-02', closedAt: at };
 
-  const found = exceptionsOf({
-    statements: [],
-    talks: [{ ...talk, expected: [bree, kit], attended: ['bree', 'visitor'] }],
-  });
+test('whoever was expected at a talk and was not there is shown, with the talk as evidence', () => {
+  const found = exceptionsOf(
+    { statements: [], talks: [{ ...talk, expected: [bree, kit], attended: ['bree', 'visitor'] }] },
+    now,
+  );
 
   expect(found).toEqual([
     {
@@ -124,6 +125,16 @@ test('whoever was expected at a talk and was not there is shown, with the talk a
   ]);
 });
 
+// Thirty days is our own line: closed on 2 March at 20:00, last shown on 1 April at 20:00.
+test.each([
+  ['2026-04-01T20:00:00.000Z', 1],
+  ['2026-04-01T20:00:00.001Z', 0],
+])('at %s a talk that was closed thirty days ago is shown %i times', (moment, times) => {
+  const facts = { statements: [], talks: [{ ...talk, expected: [bree], attended: [] }] };
+
+  expect(exceptionsOf(facts, new Date(moment))).toHaveLength(times);
+});
+
 test('nothing to look at gives no exceptions', () => {
-  expect(exceptionsOf({ statements: [], talks: [] })).toEqual([]);
+  expect(exceptionsOf({ statements: [], talks: [] }, now)).toEqual([]);
 });

@@ -23,10 +23,10 @@ export function StatementSheet({ sheet }: { sheet: Sheet }) {
       <Emergency frozen={frozen} />
       <Matrix frozen={frozen} />
       <Sources frozen={frozen} />
+      <p className="fine caution">{frozen.profile.caution}</p>
       <h2>Sign-on</h2>
       <p className="fine">{frozen.profile.signing}</p>
       <SignOnTable signatures={sheet.signatures} timeZone={frozen.site.timeZone} />
-      <p className="fine caution">{frozen.profile.caution}</p>
     </article>
   );
 }

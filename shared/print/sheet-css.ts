@@ -1,6 +1,6 @@
 /** The sheet's look, black on white. Bands deepen in one hue and carry a pattern, so that they read in grey print. */
 export const sheetCss = `
-.sheet { font: 9.5pt/1.4 'Noto Sans', 'Noto Sans Variable', sans-serif; color: #1a2226; background: #fff; max-width: 190mm; margin: 0 auto; font-variant-numeric: tabular-nums; }
+.sheet { font: 9pt/1.36 'Noto Sans', 'Noto Sans Variable', sans-serif; color: #1a2226; background: #fff; max-width: 190mm; margin: 0 auto; font-variant-numeric: tabular-nums; }
 .sheet h1 { font-size: 17pt; line-height: 1.2; margin: 2mm 0 0; font-weight: 700; }
 .sheet h2 { font-size: 11.5pt; margin: 6mm 0 2mm; padding-top: 1.5mm; border-top: 3px double #7c878c; font-weight: 700; break-after: avoid; }
 .sheet h2.free { border: 0; }
@@ -29,8 +29,8 @@ export const sheetCss = `
 .sheet td, .sheet th { border: 1px solid #7c878c; padding: 1.2mm 1.5mm; vertical-align: top; }
 .sheet thead th { background: #eceeee; font-size: 8pt; }
 .sheet .steps { table-layout: fixed; }
-.sheet .steps thead th:nth-child(1) { width: 30%; }
-.sheet .steps thead th:nth-child(2), .sheet .steps thead th:nth-child(4) { width: 10.5%; }
+.sheet .steps thead th:nth-child(1) { width: 25%; }
+.sheet .steps thead th:nth-child(2), .sheet .steps thead th:nth-child(4) { width: 9.5%; }
 .sheet tr.step th { background: #f6f5f1; font-size: 10.5pt; border-top: 2px solid #1a2226; break-after: avoid; }
 .sheet tr.step th p { font-size: 9pt; font-weight: 400; margin: 1mm 0 0; }
 .sheet tr.step { break-after: avoid; break-inside: avoid; }
@@ -39,6 +39,8 @@ export const sheetCss = `
 .sheet .controls { list-style: none; padding: 0; margin: 0; }
 .sheet .controls li { padding: 0.6mm 0; border-bottom: 1px dotted #cdd3d4; break-inside: avoid; }
 .sheet .controls li:last-child { border-bottom: 0; }
+.sheet .controls .who { display: inline; }
+.sheet .controls .who::before { content: ' · '; }
 .sheet .level { font-weight: 700; font-size: 8pt; }
 .sheet .level::after { content: ':'; }
 .sheet .who { display: block; font-size: 8pt; color: #3f484d; }

@@ -20,7 +20,7 @@ import { RatingField } from './RatingField.tsx';
 type InHand = { type: string; id: string; attrs: Record<string, unknown> };
 
 /** The one overlay at the selection: edits whatever passage the cursor stands in. */
-export function Inspector({ editor }: { editor: Editor }) {
+export function Inspector({ editor, folded = false }: { editor: Editor; folded?: boolean }) {
   const inHand = useEditorState({
     editor,
     selector: ({ editor: { state } }): InHand | null => {
@@ -36,8 +36,8 @@ export function Inspector({ editor }: { editor: Editor }) {
     apply(editor, removePassage(id));
     editor.commands.focus();
   };
-  return (
-    <section aria-label="What is selected" className="inspector">
+  const form = (
+    <>
       {type === 'fillIn' ? <FillInForm key={id} editor={editor} fillIn={attrs as FillIn} set={set} /> : null}
       {type === 'control' ? <ControlForm attrs={attrs} set={set} /> : null}
       {type === 'hazard' ? <HazardForm attrs={attrs} set={set} /> : null}
@@ -57,6 +57,20 @@ export function Inspector({ editor }: { editor: Editor }) {
       <Button kind="bare" icon={Trash2} onClick={remove} className="self-start">
         Remove this {names[type]}
       </Button>
+    </>
+  );
+  // On a narrow screen it would cover the text: it opens by itself only for a hole, which is there to be filled.
+  if (folded && type !== 'fillIn') {
+    return (
+      <details className="inspector">
+        <summary className="min-h-6 font-medium">Change this {names[type]}</summary>
+        <div className="mt-3 flex flex-col gap-3">{form}</div>
+      </details>
+    );
+  }
+  return (
+    <section aria-label="What is selected" className="inspector">
+      {form}
     </section>
   );
 }

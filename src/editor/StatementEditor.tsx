@@ -109,7 +109,9 @@ function Workbench({
         <div className="relative mt-4 border border-zinc bg-sheet p-4 sm:p-8">
           <EditorContent editor={editor} />
         </div>
-        <div className="lg:hidden">{editable ? <Inspector editor={editor} /> : null}</div>
+        <div className="sticky bottom-30 z-20 lg:hidden">
+          {editable ? <Inspector folded editor={editor} /> : null}
+        </div>
       </div>
       <div className="hidden lg:block">
         <Sides {...sides} />

@@ -2,12 +2,12 @@ import { sql } from 'drizzle-orm';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { hashOf, sha256Hex } from '#shared/kernel/canonical.ts';
 import { newId } from '#shared/kernel/ids.ts';
-import type { Refusal } from '#shared/kernel/refusal.ts';
 import type { NodeJson } from '#shared/statements/document/json.ts';
 import * as api from '#shared/statements/statements.api.ts';
 import { verifyLedgers } from '../../../server/ledger/verify.service.ts';
 import { revisions } from '../../../server/statements/statements.table.ts';
 import { draftWith, mapNodes, readyDocument } from '../../support/drafts.ts';
+import { refusalOf } from '../../support/refusals.ts';
 import { type Client, type DemoWorld, startDemoWorld } from '../../support/server.ts';
 
 let world: DemoWorld;
@@ -22,12 +22,6 @@ beforeAll(async () => {
   ready = await readyDocument(world, supervisor);
 });
 afterAll(() => world.close());
-
-const refusalOf = (call: Promise<unknown>) =>
-  call.then(
-    () => null,
-    (error: Refusal) => error,
-  );
 
 async function issued(document = ready) {
   const draft = await draftWith(world, supervisor, document);

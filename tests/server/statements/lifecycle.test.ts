@@ -2,12 +2,14 @@ import { sql } from 'drizzle-orm';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { hashOf, sha256Hex } from '#shared/kernel/canonical.ts';
 import { newId } from '#shared/kernel/ids.ts';
+import type { Gap } from '#shared/statements/readiness.ts';
+import { outlineOf } from '#shared/statements/document/outline.ts';
 import type { NodeJson } from '#shared/statements/document/json.ts';
 import * as api from '#shared/statements/statements.api.ts';
 import { verifyLedgers } from '../../../server/ledger/verify.service.ts';
 import { revisions } from '../../../server/statements/statements.table.ts';
-import { draftWith, mapNodes, readyDocument } from '../../support/drafts.ts';
-import { refusalOf } from '../../support/refusals.ts';
+import { draftWith, mapNodes, readyDocument, withParticulars } from '../../support/drafts.ts';
+import { codesOf, refusalOf } from '../../support/refusals.ts';
 import { type Client, type DemoWorld, startDemoWorld } from '../../support/server.ts';
 
 let world: DemoWorld;
@@ -71,6 +73,18 @@ test('a stale save is refused and hands over the stored draft, and nothing is ch
   expect((await supervisor.call(api.getStatement, { params: { id } })).title).toBe('A draft of a test');
 });
 
+test('a save that is sent again because its answer went missing is taken as saved, and is no quarrel with oneself', async () => {
+  const { id } = await draftWith(world, supervisor, ready);
+  const save = (title: string) =>
+    supervisor.call(api.saveDraft, { params: { id }, body: { lockVersion: 2, title, document: ready } });
+
+  const first = await save('Sent twice');
+  expect(await save('Sent twice')).toEqual(first);
+
+  expect(await refusalOf(save('Sent over another'))).toMatchObject({ code: 'conflict' });
+  expect((await supervisor.call(api.getStatement, { params: { id } })).lockVersion).toBe(3);
+});
+
 test('two saves at the same moment over one version: one is taken, the other is refused', async () => {
   const { id } = await draftWith(world, supervisor, ready);
   const save = (title: string) =>
@@ -124,6 +138,21 @@ test.each<[string, (document: NodeJson) => NodeJson, RegExp]>([
     }),
     /Its id is the same as that of step \d+/,
   ],
+  [
+    'a character that can’t be kept',
+    (document) => withText(document, 'a\0b'),
+    /character that can’t be kept/,
+  ],
+  ['half a character', (document) => withText(document, 'a\ud83db'), /character that can’t be kept/],
+  [
+    'nesting without end',
+    (document) => {
+      let inner: NodeJson = { type: 'paragraph' };
+      for (let depth = 0; depth < 400; depth++) inner = { type: 'bulletList', content: [inner] };
+      return { ...document, content: [...(document.content ?? []), inner] };
+    },
+    /nested too deeply/,
+  ],
 ])('a document with %s is refused, and the words name the place', async (_name, spoil, words) => {
   const { id } = await draftWith(world, supervisor, ready);
 
@@ -137,6 +166,27 @@ test.each<[string, (document: NodeJson) => NodeJson, RegExp]>([
   expect(refusal?.code).toBe('invalid');
   expect(refusal?.message).toMatch(words);
   expect((await supervisor.call(api.getStatement, { params: { id } })).lockVersion).toBe(2);
+});
+
+const withText = (document: NodeJson, text: string): NodeJson => ({
+  ...document,
+  content: [...(document.content ?? []), { type: 'paragraph', content: [{ type: 'text', text }] }],
+});
+
+test('a document nested so deeply that reading it would overflow is refused in words', async () => {
+  const { id } = await draftWith(world, supervisor, ready);
+  const document = '{"type":"bulletList","content":['.repeat(30_000) + ']}'.repeat(30_000);
+
+  const response = await supervisor.fetch(`/api/statements/${id}/draft`, {
+    method: 'PUT',
+    body: `{"lockVersion":2,"title":"Deep","document":${document}}`,
+  });
+
+  expect(response.status).toBe(400);
+  expect(await response.json()).toMatchObject({
+    code: 'invalid',
+    fields: { document: expect.stringContaining('deeply') },
+  });
 });
 
 test('a document over two megabytes is refused and the limit is named', async () => {
@@ -220,6 +270,143 @@ test('a submitted draft can’t be written on; it can be taken back, and handed 
   expect(returned).toMatchObject({ state: 'draft', returnNote: 'Say who reads the wind.' });
 });
 
+test('an act on a statement that moved on says so: by its state where that says more, else that it was changed', async () => {
+  const draft = await draftWith(world, supervisor, ready);
+  const params = { id: draft.id };
+  const body = { lockVersion: draft.lockVersion };
+  const submitted = await supervisor.call(api.submitDraft, { params, body });
+
+  expect(await refusalOf(supervisor.call(api.submitDraft, { params, body }))).toMatchObject({
+    code: 'conflict',
+    message: 'Only a draft can be submitted.',
+    extra: { state: 'submitted' },
+  });
+  expect(
+    await refusalOf(
+      officer.call(api.issueStatement, { params, body: { ...body, material: true, changeNote: '' } }),
+    ),
+  ).toMatchObject({
+    code: 'conflict',
+    message: expect.stringContaining('changed since you opened it'),
+    extra: { state: 'submitted', lockVersion: submitted.lockVersion },
+  });
+  expect((await officer.call(api.getStatement, { params })).revisions).toEqual([]);
+});
+
+test('in every state only its own acts are taken, and the rest change nothing', async () => {
+  const acts: Record<string, (id: string, lockVersion: number) => Promise<unknown>> = {
+    save: (id, lockVersion) =>
+      supervisor.call(api.saveDraft, {
+        params: { id },
+        body: { lockVersion, title: 'New', document: ready },
+      }),
+    submit: (id, lockVersion) => supervisor.call(api.submitDraft, { params: { id }, body: { lockVersion } }),
+    recall: (id, lockVersion) => supervisor.call(api.recallDraft, { params: { id }, body: { lockVersion } }),
+    return: (id, lockVersion) =>
+      officer.call(api.returnDraft, { params: { id }, body: { lockVersion, note: 'No' } }),
+    issue: (id, lockVersion) =>
+      officer.call(api.issueStatement, {
+        params: { id },
+        body: { lockVersion, material: true, changeNote: '' },
+      }),
+    revise: (id, lockVersion) =>
+      supervisor.call(api.reviseStatement, { params: { id }, body: { lockVersion } }),
+    withdraw: (id, lockVersion) =>
+      officer.call(api.withdrawStatement, { params: { id }, body: { lockVersion, reason: 'Done' } }),
+    discard: (id) => supervisor.call(api.discardStatement, { params: { id } }),
+  };
+  const draft = await draftWith(world, supervisor, ready);
+  const submitted = await draftWith(world, supervisor, ready);
+  await supervisor.call(api.submitDraft, { params: { id: submitted.id }, body: { lockVersion: 2 } });
+  const inForce = await issued();
+  const withdrawn = await issued();
+  await officer.call(api.withdrawStatement, {
+    params: { id: withdrawn.id },
+    body: { lockVersion: withdrawn.lockVersion, reason: 'Done' },
+  });
+  const taken = {
+    [draft.id]: ['save', 'submit', 'discard'],
+    [submitted.id]: ['recall', 'return', 'issue', 'discard'],
+    [inForce.id]: ['revise', 'withdraw'],
+    [withdrawn.id]: [],
+  } as Record<string, string[]>;
+
+  for (const [id, own] of Object.entries(taken)) {
+    const before = await officer.call(api.getStatement, { params: { id } });
+    for (const [name, act] of Object.entries(acts).filter(([name]) => !own.includes(name)))
+      expect([before.state, name, (await refusalOf(act(id, before.lockVersion)))?.code]).toEqual([
+        before.state,
+        name,
+        'conflict',
+      ]);
+    expect(await officer.call(api.getStatement, { params: { id } })).toEqual(before);
+  }
+});
+
+test('two safety officers who issue at the same moment make one revision and one entry', async () => {
+  const draft = await draftWith(world, supervisor, ready);
+  const params = { id: draft.id };
+  const { lockVersion } = await supervisor.call(api.submitDraft, { params, body: { lockVersion: 2 } });
+  const issue = () =>
+    officer.call(api.issueStatement, { params, body: { lockVersion, material: true, changeNote: '' } });
+
+  expect((await codesOf([issue(), issue(), issue()])).sort()).toEqual(['conflict', 'conflict', undefined]);
+
+  const { revisions: all } = await officer.call(api.getStatement, { params });
+  expect(all).toHaveLength(1);
+  const { rows } = await world.db.execute(
+    sql`select 1 from ledger_entries where subject = ${`revision:${all[0]?.id}`}`,
+  );
+  expect(rows).toHaveLength(1);
+});
+
+test('the first revision is for everybody to sign, whatever was ticked', async () => {
+  const draft = await draftWith(world, supervisor, ready);
+  const params = { id: draft.id };
+  const { lockVersion } = await supervisor.call(api.submitDraft, { params, body: { lockVersion: 2 } });
+
+  const statement = await officer.call(api.issueStatement, {
+    params,
+    body: { lockVersion, material: false, changeNote: '' },
+  });
+
+  expect(statement.revisions[0]?.material).toBe(true);
+});
+
+test('a rating off the matrix, a residual risk above the initial one and high risk work that the law does not list keep a draft back', async () => {
+  const first = outlineOf(ready).steps[0]?.hazards[0]?.id;
+  const rated = (changes: object) =>
+    mapNodes(structuredClone(ready), (node) =>
+      node.attrs?.id === first ? { ...node, attrs: { ...node.attrs, ...changes } } : node,
+    );
+  const gapsOf = async (document: NodeJson) => {
+    const draft = await draftWith(world, supervisor, document);
+    const params = { id: draft.id };
+    const { lockVersion } = await supervisor.call(api.submitDraft, { params, body: { lockVersion: 2 } });
+    const refusal = await refusalOf(
+      officer.call(api.issueStatement, { params, body: { lockVersion, material: true, changeNote: '' } }),
+    );
+    return ((refusal?.extra.gaps ?? []) as Gap[]).map(({ rule, place }) => [rule, place]);
+  };
+  const place = { kind: 'node', id: first };
+
+  expect(await gapsOf(rated({ residual: { likelihood: 'Q', consequence: 5 } }))).toEqual([['rating', place]]);
+  expect(
+    await gapsOf(
+      rated({
+        initial: { likelihood: 'E', consequence: 1 },
+        residual: { likelihood: 'C', consequence: 3 },
+      }),
+    ),
+  ).toEqual([['residual', place]]);
+  expect(await gapsOf(rated({ residual: { likelihood: 'A', consequence: 5 } }))).toEqual([
+    ['residual', place],
+  ]);
+  expect(await gapsOf(withParticulars(structuredClone(ready), { highRisk: ['zz'] }))).toEqual([
+    ['highRisk', { kind: 'titleBlock', field: 'highRisk' }],
+  ]);
+});
+
 test('a frozen revision stays as it is whatever is done to the draft of the next, and is then superseded', async () => {
   const statement = await issued();
   const params = { id: statement.id };
@@ -271,6 +458,22 @@ test('whoever has a printed copy learns whether it is current, superseded, withd
     number: null,
     issuedAt: null,
   });
+});
+
+test('where the digits typed begin the hash of more than one revision, more are asked for instead of a guess', async () => {
+  const statement = await issued();
+  const [{ id = '', hash = '' } = {}] = statement.revisions;
+  const twin = `${hash.slice(0, 12)}${'0'.repeat(52)}`;
+  await world.db.execute(
+    sql`insert into revisions select (r).* from (select jsonb_populate_record(revisions, jsonb_build_object('id', gen_random_uuid(), 'number', 99, 'hash', ${twin}::text)) as r from revisions where id = ${id}) as copies`,
+  );
+  const visitor = world.client();
+  const verify = (digits: string) => visitor.call(api.verifyHash, { params: { hash: digits } });
+
+  expect(await refusalOf(verify(hash.slice(0, 10)))).toMatchObject({ code: 'conflict' });
+  expect((await verify(hash)).number).toBe(1);
+  expect(await refusalOf(verify(hash.slice(0, 9)))).toMatchObject({ code: 'invalid' });
+  expect(await refusalOf(verify(`${hash.slice(0, 9)}%`))).toMatchObject({ code: 'invalid' });
 });
 
 test('a draft that was never issued can be thrown away, an issued one can’t', async () => {

@@ -94,6 +94,8 @@ test('a late signature of somebody taken off the lists is kept, and does not bri
   const talk = await supervisor.call(getTalk, { params: { id: talkId } });
   expect(talk.attendance).toMatchObject([{ personId: id }]);
   expect(talk.missing.map(({ personId }) => personId)).not.toContain(id);
+  // Whoever is off the lists is not shown on a crew: it would come out when they are brought back.
+  await supervisor.call(archivePerson, { params: { id }, body: { archived: false } });
   expect(await crewOf('wattle')).not.toContain(id);
 });
 

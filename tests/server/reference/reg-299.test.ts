@@ -90,7 +90,7 @@ async function gapsOnIssue(document: NodeJson): Promise<Gap[]> {
   return (refusal?.extra.gaps ?? []) as Gap[];
 }
 
-test('the statement as it stands is issued without a gap (T5: no signature or score is asked for by the law)', async () => {
+test('the statement as it stands is issued without a gap (T5: no signature is asked for)', async () => {
   expect(await gapsOnIssue(ready)).toEqual([]);
 });
 
@@ -131,6 +131,17 @@ test.each<[string, (document: NodeJson) => NodeJson, string]>([
 
   expect(gaps.length).toBeGreaterThan(0);
   for (const gap of gaps) expect(gap).toMatchObject({ severity: 'law', clause });
+});
+
+test('a statement without risk scores is held back by the product’s own rule; no clause of the law is named for it (T5)', async () => {
+  const gaps = await gapsOnIssue(
+    mapNodes(structuredClone(ready), (node) =>
+      node.type === 'hazard' ? { ...node, attrs: { ...node.attrs, initial: null, residual: null } } : node,
+    ),
+  );
+
+  expect(gaps.length).toBe(outlineOf(ready).steps.flatMap(({ hazards }) => hazards).length);
+  for (const gap of gaps) expect(gap).toMatchObject({ rule: 'rating', severity: 'rule', clause: null });
 });
 
 test('an open fill-in keeps a statement from being issued, as the product’s own rule and not as law', async () => {
